@@ -1,0 +1,52 @@
+/** What a spreadsheet hands to a function for one cell, after the host's wrappings are taken off. */
+export type Cell = number | string | boolean | null | CellError;
+
+/** What a function hands back: a rectangle of these. */
+export type OutCell = number | string | boolean;
+export type OutTable = OutCell[][];
+
+/** An error value that stands in a cell, such as #N/A. */
+export class CellError {
+  constructor(readonly code: string) {}
+}
+
+/**
+ * Takes the host's wrapping off one raw value: rich values carry `basicValue`, errors come as an object with a
+ * `code` or as {type: "Error"}, and a blank may be null, undefined or "".
+ */
+export function toCell(raw: unknown): Cell {
+  if (raw === null || raw === undefined || raw === "") return null;
+  if (typeof raw === "number") return Number.isFinite(raw) ? raw : new CellError("#NUM!");
+  if (typeof raw === "string" || typeof raw === "boolean") return raw;
+  if (raw instanceof CellError) return raw;
+  if (typeof raw === "bigint") return Number(raw);
+  if (typeof raw === "object") {
+    const rich = raw as { type?: unknown; basicValue?: unknown; code?: unknown };
+    if (rich.type === "Error") return new CellError(String(rich.basicValue ?? "#VALUE!"));
+    if ("basicValue" in rich) return toCell(rich.basicValue);
+    if (typeof rich.code === "string") return new CellError(rich.code);
+  }
+  return String(raw);
+}
+
+export const isBlank = (cell: Cell): cell is null => cell === null || (typeof cell === "string" && cell.trim() === "");
+
+/**
+ * A range argument as a rectangle of cells: accepts the 2-D array of a range, a bare value, or a single row.
+ * Ragged rows are padded with blanks; an omitted argument is null.
+ */
+export function toCells(raw: unknown): Cell[][] | null {
+  if (raw === null || raw === undefined) return null;
+  const rows = Array.isArray(raw) ? raw.map((row: unknown) => (Array.isArray(row) ? (row as unknown[]) : [row])) : [[raw]];
+  const width = rows.reduce((w, row) => Math.max(w, row.length), 0);
+  const cells = rows.map((row) => Array.from({ length: width }, (_, j) => toCell(row[j])));
+  return cells.length === 0 || width === 0 || cells.every((row) => row.every(isBlank)) ? null : cells;
+}
+
+/** How a cell is quoted in a message. */
+export function describeCell(cell: Cell): string {
+  if (cell === null) return "a blank cell";
+  if (cell instanceof CellError) return `the error ${cell.code}`;
+  if (typeof cell === "string") return `text '${cell.length > 30 ? `${cell.slice(0, 29)}…` : cell}'`;
+  return typeof cell === "boolean" ? String(cell).toUpperCase() : String(cell);
+}
