@@ -26,7 +26,12 @@ export type BlockFault =
   | { readonly kind: "blank-cell"; readonly row: number; readonly column: number }
   | { readonly kind: "not-a-number"; readonly row: number; readonly column: number; readonly text: string }
   | { readonly kind: "rows-moved"; readonly row: number; readonly label: string; readonly expected: string }
-  | { readonly kind: "columns-moved"; readonly column: number; readonly name: string; readonly expected: string };
+  | {
+      readonly kind: "columns-moved";
+      readonly column: number;
+      readonly name: string;
+      readonly expected: string;
+    };
 
 /**
  * Everything that can be wrong with a request or with the data, as facts without words.
@@ -36,7 +41,13 @@ export type IssueFacts =
   // cells
   | { readonly code: "no-numbers"; readonly range: string }
   | { readonly code: "missing-argument"; readonly argument: string }
-  | { readonly code: "not-a-number-cell"; readonly range: string; readonly name: string; readonly row: number; readonly found: string }
+  | {
+      readonly code: "not-a-number-cell";
+      readonly range: string;
+      readonly name: string;
+      readonly row: number;
+      readonly found: string;
+    }
   | { readonly code: "gap"; readonly range: string; readonly name: string; readonly row: number }
   | { readonly code: "blank-series"; readonly name: string }
   | { readonly code: "header-number"; readonly range: string; readonly column: number; readonly text: string }
@@ -45,15 +56,30 @@ export type IssueFacts =
   | { readonly code: "drivers-short"; readonly have: number; readonly need: number; readonly future: number }
   | { readonly code: "columns-differ"; readonly range: string; readonly have: number; readonly need: number }
   // scalars and options
-  | { readonly code: "bad-argument"; readonly argument: string; readonly found: string; readonly allowed: Allowed }
+  | {
+      readonly code: "bad-argument";
+      readonly argument: string;
+      readonly found: string;
+      readonly allowed: Allowed;
+    }
   | { readonly code: "unknown-option"; readonly key: string; readonly allowed: readonly string[] }
-  | { readonly code: "option-not-here"; readonly key: string; readonly call: string; readonly allowed: readonly string[] }
+  | {
+      readonly code: "option-not-here";
+      readonly key: string;
+      readonly call: string;
+      readonly allowed: readonly string[];
+    }
   | { readonly code: "option-twice"; readonly key: string }
   | { readonly code: "option-without-value"; readonly text: string }
   | { readonly code: "bad-option"; readonly key: string; readonly found: string; readonly allowed: Allowed }
   | { readonly code: "option-needs"; readonly key: string; readonly needs: string }
   | { readonly code: "options-clash"; readonly key: string; readonly other: string }
-  | { readonly code: "option-against-block"; readonly key: string; readonly found: string; readonly block: string }
+  | {
+      readonly code: "option-against-block";
+      readonly key: string;
+      readonly found: string;
+      readonly block: string;
+    }
   | { readonly code: "steps-count"; readonly have: number; readonly series: number }
   | { readonly code: "labels-needed" }
   | { readonly code: "bad-range-options"; readonly columns: number }
@@ -66,13 +92,26 @@ export type IssueFacts =
   | { readonly code: "covariance-asymmetric"; readonly row: number; readonly column: number }
   | { readonly code: "covariance-not-positive" }
   // data
-  | { readonly code: "too-few-rows"; readonly order: number; readonly series: number; readonly rows: number; readonly need: number; readonly largest: number | null }
+  | {
+      readonly code: "too-few-rows";
+      readonly order: number;
+      readonly series: number;
+      readonly rows: number;
+      readonly need: number;
+      readonly largest: number | null;
+    }
   | { readonly code: "lags-beyond-rows"; readonly lag: number; readonly rows: number }
-  | { readonly code: "step-domain"; readonly step: "log" | "sqrt"; readonly series: number; readonly row: number; readonly value: number }
+  | {
+      readonly code: "step-domain";
+      readonly step: "log" | "sqrt";
+      readonly series: number;
+      readonly row: number;
+      readonly value: number;
+    }
   | { readonly code: "steps-leave-nothing"; readonly lost: number; readonly rows: number }
   | { readonly code: "constant-series"; readonly series: number }
   | { readonly code: "exact-combination"; readonly columns: readonly WeightedColumn[] }
-  | { readonly code: "predicted-exactly"; readonly series: number }
+  | { readonly code: "predicted-exactly"; readonly order: number }
   | { readonly code: "singular-system" }
   | { readonly code: "unstable"; readonly modulus: number }
   | { readonly code: "no-lags" }

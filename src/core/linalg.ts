@@ -117,7 +117,8 @@ export function solveSquare(a: Matrix, b: Matrix): MutableMatrix {
 export function cholesky(a: Matrix): MutableMatrix | null {
   const scales = a.map((row, i) => Math.sqrt(row[i]));
   if (!scales.every((s) => s > 0 && Number.isFinite(s))) return null;
-  const scaled = a.map((row, i) => row.map((v, j) => v / scales[i] / scales[j]));
+  // the library wants exact symmetry, which products of rounded numbers do not have
+  const scaled = a.map((row, i) => row.map((v, j) => (v + a[j][i]) / 2 / (scales[i] * scales[j])));
   const decomposition = new CholeskyDecomposition(dense(scaled));
   if (!decomposition.isPositiveDefinite()) return null;
   const lower = plain(decomposition.lowerTriangularMatrix);

@@ -29,7 +29,8 @@ export function toCell(raw: unknown): Cell {
   return String(raw);
 }
 
-export const isBlank = (cell: Cell): cell is null => cell === null || (typeof cell === "string" && cell.trim() === "");
+export const isBlank = (cell: Cell): cell is null =>
+  cell === null || (typeof cell === "string" && cell.trim() === "");
 
 /**
  * A range argument as a rectangle of cells: accepts the 2-D array of a range, a bare value, or a single row.
@@ -37,7 +38,9 @@ export const isBlank = (cell: Cell): cell is null => cell === null || (typeof ce
  */
 export function toCells(raw: unknown): Cell[][] | null {
   if (raw === null || raw === undefined) return null;
-  const rows = Array.isArray(raw) ? raw.map((row: unknown) => (Array.isArray(row) ? (row as unknown[]) : [row])) : [[raw]];
+  const rows = Array.isArray(raw)
+    ? raw.map((row: unknown) => (Array.isArray(row) ? (row as unknown[]) : [row]))
+    : [[raw]];
   const width = rows.reduce((w, row) => Math.max(w, row.length), 0);
   const cells = rows.map((row) => Array.from({ length: width }, (_, j) => toCell(row[j])));
   return cells.length === 0 || width === 0 || cells.every((row) => row.every(isBlank)) ? null : cells;

@@ -14,7 +14,12 @@ export interface Sample {
 
 /** Which model is meant: to be chosen, to be fitted, or given with its numbers. */
 export type ModelPlan =
-  | { readonly kind: "auto"; readonly shape: Shape; readonly criterion: Criterion; readonly maxOrder: number | null }
+  | {
+      readonly kind: "auto";
+      readonly shape: Shape;
+      readonly criterion: Criterion;
+      readonly maxOrder: number | null;
+    }
   | { readonly kind: "fit"; readonly settings: ModelSettings }
   | { readonly kind: "given"; readonly model: VarModel };
 

@@ -1,0 +1,71 @@
+import { normalQuantile } from "../distributions";
+import type { Matrix } from "../matrix";
+import { integratePath } from "../prepare/steps";
+import { designOf } from "../var/design";
+import { fitModel } from "../var/fit";
+import { leastSquares } from "../var/least-squares";
+import type { VarModel } from "../var/model";
+import { requireRows } from "../var/rows-needed";
+import type { ModelRequest } from "../var/sample";
+import { orderOf } from "../var/settings";
+import { stepSample, type SteppedSample } from "../var/stepped";
+import { toMean, toMedian, type AheadRequest } from "./ahead";
+import { coefficientVariances, pathDeviations } from "./deviations";
+import { forecastPath } from "./path";
+
+export interface BandsRequest extends AheadRequest {
+  readonly coverage: number;
+  readonly joint: boolean;
+  /** Coefficients taken as known, or their sampling error included. */
+  readonly bands: "known" | "fitted";
+}
+
+/** A forecast with its limits, each h×K in original units. */
+export interface Bands {
+  readonly low: Matrix;
+  readonly point: Matrix;
+  readonly high: Matrix;
+}
+
+/**
+ * Forecast with limits that hold the stated share of outcomes, row by row and series by series, or for all of
+ * them together (`joint`, by Bonferroni's inequality over h·K limits).
+ */
+export function forecastBands(
+  request: BandsRequest,
+  fit: (request: ModelRequest) => VarModel = fitModel,
+): Bands {
+  const { sample, plan, horizon, coverage, joint } = request;
+  const model = fit({ sample, plan });
+  const { steps } = model.settings;
+  const stepped = stepSample(sample, steps);
+  const { forecast, regressors } = forecastPath(model, stepped, horizon);
+  const level = integratePath(sample.series, steps, forecast);
+  const known = pathDeviations(model, horizon);
+  const deviations = request.bands === "known" ? known : withCoefficients(model, stepped, known, regressors);
+  const miss = (1 - coverage) / (joint ? horizon * model.series : 1);
+  const reach = -normalQuantile(miss / 2);
+  const limit = (sign: number) =>
+    toMedian(
+      level.map((row, j) => row.map((v, k) => v + sign * reach * deviations[j][k])),
+      steps,
+    );
+  return {
+    low: limit(-1),
+    point: request.point === "mean" ? toMean(level, known, steps) : toMedian(level, steps),
+    high: limit(1),
+  };
+}
+
+/** Adds the coefficients' sampling error, its regressors Z taken from the range at hand. */
+function withCoefficients(
+  model: VarModel,
+  stepped: SteppedSample,
+  known: Matrix,
+  regressors: Matrix,
+): Matrix {
+  requireRows(model.settings, { rows: stepped.y.length, series: model.series, drivers: model.drivers });
+  const { inverseRoot } = leastSquares(designOf(stepped, model.settings, orderOf(model.settings)));
+  const extra = coefficientVariances(model, regressors, inverseRoot);
+  return known.map((row, j) => row.map((v, k) => Math.hypot(v, Math.sqrt(extra[j][k]))));
+}

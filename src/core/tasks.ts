@@ -1,0 +1,57 @@
+import { forecastAhead, type AheadRequest } from "./forecast/ahead";
+import { forecastBands, type BandsRequest } from "./forecast/bands";
+import type { Matrix } from "./matrix";
+import { lagCorrelations, lagCovariances, type Divisor } from "./moments/lag-covariance";
+import { applySteps, undoSteps, type StepPlan } from "./prepare/steps";
+import { fitModel } from "./var/fit";
+import type { VarModel } from "./var/model";
+import { compareOrders } from "./var/order";
+import { rootsOf } from "./var/roots";
+import type { ModelRequest, Sample } from "./var/sample";
+import type { Shape } from "./var/settings";
+import { stepSample } from "./var/stepped";
+
+/** How one task asks for another, so that a fit is computed once for all the calls that need it. */
+export interface Runner {
+  fit(request: ModelRequest): VarModel;
+}
+
+export interface LagRequest {
+  readonly series: Matrix;
+  readonly lags: readonly number[];
+  readonly divisor: Divisor;
+}
+
+export interface StepsRequest {
+  readonly series: Matrix;
+  readonly plan: StepPlan;
+}
+
+export interface OrderRequest {
+  readonly sample: Sample;
+  readonly shape: Shape;
+  readonly maxOrder: number;
+}
+
+/**
+ * Everything the core computes, by name: the list that the engine runs, inline or in a worker.
+ * Requests and results are plain data.
+ */
+export const tasks = {
+  lagCovariance: ({ series, lags, divisor }: LagRequest) => lagCovariances(series, lags, divisor),
+  lagCorrelation: ({ series, lags, divisor }: LagRequest) => lagCorrelations(series, lags, divisor),
+  steps: ({ series, plan }: StepsRequest) => applySteps(series, plan),
+  unstep: ({ series, plan, values }: StepsRequest & { readonly values: Matrix }) =>
+    undoSteps(series, plan, values),
+  order: ({ sample, shape, maxOrder }: OrderRequest) =>
+    compareOrders(stepSample(sample, shape.steps), shape, maxOrder),
+  fit: (request: ModelRequest) => fitModel(request),
+  roots: ({ model }: { readonly model: VarModel }) => rootsOf(model),
+  ahead: (request: AheadRequest, run: Runner) => forecastAhead(request, run.fit),
+  bands: (request: BandsRequest, run: Runner) => forecastBands(request, run.fit),
+};
+
+export type Tasks = typeof tasks;
+export type TaskName = keyof Tasks;
+export type RequestOf<N extends TaskName> = Parameters<Tasks[N]>[0];
+export type ResultOf<N extends TaskName> = ReturnType<Tasks[N]>;

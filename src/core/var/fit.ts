@@ -1,0 +1,85 @@
+import { scale } from "../linalg";
+import type { Matrix } from "../matrix";
+import { designOf } from "./design";
+import { refuseExactSeries } from "./exact";
+import { leastSquares, residualCovariance } from "./least-squares";
+import type { VarModel } from "./model";
+import { chooseOrder } from "./order";
+import { regressorCount, regressorsOf } from "./regressors";
+import { requireRows } from "./rows-needed";
+import type { ModelRequest, Sample } from "./sample";
+import { allLags, orderOf, type ModelSettings } from "./settings";
+import { stepSample, type SteppedSample } from "./stepped";
+import { carryTerms, removeTerms, yuleWalker } from "./yule-walker";
+
+/** The numbers that an estimator returns. */
+interface Estimate {
+  readonly coefficients: Matrix;
+  readonly noiseCovariance: Matrix;
+}
+
+/** The model that a request means: given with its numbers, or fitted to the sample with an order given or chosen. */
+export function fitModel({ sample, plan }: ModelRequest): VarModel {
+  if (plan.kind === "given") return plan.model;
+  return fitSettings(sample, settingsOf(sample, plan));
+}
+
+/** The settings that a request means; an automatic order is chosen here. */
+export function settingsOf(sample: Sample, plan: ModelRequest["plan"]): ModelSettings {
+  if (plan.kind === "given") return plan.model.settings;
+  if (plan.kind === "fit") return plan.settings;
+  const stepped = stepSample(sample, plan.shape.steps);
+  return { ...plan.shape, lags: allLags(chooseOrder(stepped, plan.shape, plan.criterion, plan.maxOrder)) };
+}
+
+/**
+ * Estimates every coefficient of the settings from the sample.
+ * @throws Issue "too-few-rows" | "constant-series" | "exact-combination" | "singular-system"
+ */
+export function fitSettings(sample: Sample, settings: ModelSettings): VarModel {
+  const stepped = stepSample(sample, settings.steps);
+  const rows = stepped.y.length;
+  const series = stepped.y[0].length;
+  const drivers = stepped.drivers[0]?.length ?? 0;
+  requireRows(settings, { rows, series, drivers });
+  refuseExactSeries(stepped.y, settings, stepped.start);
+  return {
+    settings,
+    series,
+    drivers,
+    regressors: regressorsOf(settings, series, drivers),
+    ...estimate(stepped, settings),
+    rows,
+    start: sample.start,
+  };
+}
+
+function estimate(stepped: SteppedSample, settings: ModelSettings): Estimate {
+  const rows = stepped.y.length;
+  const q = regressorCount(settings, stepped.y[0].length, stepped.drivers[0]?.length ?? 0);
+  switch (settings.fit) {
+    case "least-squares":
+      return byLeastSquares(stepped, settings, rows - orderOf(settings) - q);
+    case "yule-walker":
+      return byYuleWalker(stepped, settings, rows / (rows - q));
+    default:
+      throw new Error(`no estimator for ${settings.fit}`);
+  }
+}
+
+/** Innovation covariance UᵀU/(T − q). */
+function byLeastSquares(stepped: SteppedSample, settings: ModelSettings, divisor: number): Estimate {
+  const { coefficients, residuals } = leastSquares(designOf(stepped, settings, orderOf(settings)));
+  return { coefficients, noiseCovariance: residualCovariance(residuals, divisor) };
+}
+
+/** Innovation covariance of the recursion times n/(n − q). */
+function byYuleWalker(stepped: SteppedSample, settings: ModelSettings, factor: number): Estimate {
+  const { rest, taken } = removeTerms(stepped, settings);
+  const { lagMatrices, innovation } = yuleWalker(rest, settings);
+  const terms = carryTerms(settings, taken, lagMatrices);
+  return {
+    coefficients: [...terms, ...lagMatrices.flatMap((phi) => phi[0].map((_, k) => phi.map((row) => row[k])))],
+    noiseCovariance: scale(innovation, factor),
+  };
+}

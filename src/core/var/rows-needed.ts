@@ -1,0 +1,60 @@
+import { Issue } from "../issue";
+import { termNames } from "./terms";
+import { orderOf, type Calendar } from "./settings";
+
+/**
+ * Rows that a fit needs: p are spent as lags, and each equation's residuals must outnumber its
+ * coefficients by the number of series for their covariance to exist, n ≥ p + q + K.
+ */
+export function rowsNeeded(
+  calendar: Calendar & { readonly lags: readonly number[] },
+  series: number,
+  drivers: number,
+): number {
+  const coefficients = termNames(calendar).length + drivers + series * calendar.lags.length;
+  return orderOf(calendar) + coefficients + series;
+}
+
+/** The largest order 0… that n rows can carry with all its lags, or null when not even order 0 fits. */
+export function largestOrder(
+  calendar: Calendar,
+  rows: number,
+  series: number,
+  drivers: number,
+): number | null {
+  const spare = rows - rowsNeeded({ ...calendar, lags: [] }, series, drivers);
+  return spare < 0 ? null : Math.floor(spare / (1 + series));
+}
+
+/** What there is to fit on. */
+export interface Extent {
+  readonly rows: number;
+  readonly series: number;
+  readonly drivers: number;
+}
+
+/** @throws Issue "too-few-rows" */
+export function requireRows(calendar: Calendar & { readonly lags: readonly number[] }, extent: Extent): void {
+  refuseBelow(rowsNeeded(calendar, extent.series, extent.drivers), calendar, orderOf(calendar), extent);
+}
+
+/**
+ * The same for all lags up to an order, by arithmetic alone: an order of a billion is refused before anything
+ * of its size is laid out.
+ * @throws Issue "too-few-rows"
+ */
+export function requireOrder(calendar: Calendar, order: number, extent: Extent): void {
+  const base = rowsNeeded({ ...calendar, lags: [] }, extent.series, extent.drivers);
+  refuseBelow(base + order * (1 + extent.series), calendar, order, extent);
+}
+
+function refuseBelow(
+  need: number,
+  calendar: Calendar,
+  order: number,
+  { rows, series, drivers }: Extent,
+): void {
+  if (rows >= need) return;
+  const largest = largestOrder(calendar, rows, series, drivers);
+  throw new Issue({ code: "too-few-rows", order, series, rows, need, largest });
+}

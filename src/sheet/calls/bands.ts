@@ -1,0 +1,38 @@
+import { headings } from "../../texts/en";
+import { defineCall } from "../call";
+import { readModelCall } from "../model-call";
+import { MODEL_KEYS } from "../model-plan";
+import { readHorizon } from "../scalars";
+import { numberRows, requireCells, wantsLabels } from "../tables";
+
+export const bands = defineCall({
+  name: "BANDS",
+  task: "bands",
+  read: (args) => {
+    const horizon = readHorizon(args["horizon"]);
+    const { request, series, options, wording } = readModelCall(args, {
+      call: "BANDS",
+      keys: [...MODEL_KEYS, "coverage", "bands", "joint", "point", "labels"],
+      future: horizon,
+      use: "numbers",
+    });
+    requireCells(horizon + 1, 3 * series.names.length);
+    return {
+      request: {
+        ...request,
+        horizon,
+        point: options.point ?? "median",
+        coverage: options.coverage ?? 0.95,
+        joint: options.joint === "yes",
+        bands: options.bands ?? "fitted",
+      },
+      layout: wantsLabels(options, series) ? series.names : null,
+      wording,
+    };
+  },
+  write: ({ low, point, high }, names: readonly string[] | null) =>
+    numberRows(
+      point.map((row, j) => row.flatMap((v, k) => [low[j][k], v, high[j][k]])),
+      names && names.flatMap((name) => [`${name} ${headings.low}`, name, `${name} ${headings.high}`]),
+    ),
+});

@@ -1,0 +1,110 @@
+import { Issue } from "../core/issue";
+import type { Matrix } from "../core/matrix";
+import type { VarModel } from "../core/var/model";
+import { allLags, isSubset, orderOf, type ModelSettings } from "../core/var/settings";
+import { OPTIONS } from "./option-specs";
+import { formatSteps, spreadSteps } from "./steps-text";
+
+/** What the first cell of a model block says. */
+export interface Tag {
+  readonly settings: ModelSettings;
+  readonly series: number;
+  readonly drivers: number;
+  readonly rows: number;
+  readonly start: number;
+  /** Digest of the numbers as they were written. */
+  readonly sum: string;
+}
+
+const OPENING = "comove model";
+
+export const isTag = (cell: unknown): cell is string =>
+  typeof cell === "string" && cell.trim().toLowerCase().startsWith(OPENING);
+
+/** The canonical `key=value` list of a model's settings. */
+export function settingsText(settings: ModelSettings): string {
+  const parts = [`p=${orderOf(settings)}`, `fit=${settings.fit}`, `terms=${settings.terms}`];
+  if (settings.cycle !== null) parts.push(`cycle=${settings.cycle}`);
+  if (settings.waves !== null) parts.push(`waves=${settings.waves}`);
+  if (isSubset(settings.lags)) parts.push(`uselags=${settings.lags.join(" ")}`);
+  if (settings.steps.some((list) => list.length > 0)) parts.push(`steps=${formatSteps(settings.steps)}`);
+  return parts.join("; ");
+}
+
+/** The tag of a model: everything needed to use the block, and the digest of its numbers. */
+export function formatTag(model: VarModel): string {
+  const parts = [settingsText(model.settings), `series=${model.series}`];
+  if (model.drivers > 0) parts.push(`drivers=${model.drivers}`);
+  if (model.start !== 1) parts.push(`start=${model.start}`);
+  parts.push(`n=${model.rows}`, `sum=${digest([model.coefficients, model.noiseCovariance])}`);
+  return `${OPENING} ${parts.join("; ")}`;
+}
+
+/**
+ * Reads a tag.
+ * @throws Issue "model-block" naming the part that cannot be read
+ */
+export function parseTag(text: string): Tag {
+  const given = new Map<string, string>();
+  for (const part of text.trim().slice(OPENING.length).split(";")) {
+    const [key, ...value] = part.split("=");
+    given.set(key.trim().toLowerCase(), value.join("=").trim());
+  }
+  const bad = (part: string) => new Issue({ code: "model-block", fault: { kind: "bad-tag", part } });
+  const read = <T>(key: string, parse: (value: string) => T | undefined | null, otherwise?: T): T => {
+    const value = given.get(key);
+    if (value === undefined && otherwise !== undefined) return otherwise;
+    const parsed = value === undefined ? undefined : parse(value);
+    if (parsed === undefined || parsed === null) throw bad(key);
+    return parsed;
+  };
+  const option =
+    <K extends keyof typeof OPTIONS>(key: K) =>
+    (value: string) =>
+      OPTIONS[key].parse(value);
+  const order = read("p", OPTIONS.maxorder.parse);
+  const series = read("series", whole);
+  const lags = given.has("uselags")
+    ? (read("uselags", option("uselags")) as readonly number[])
+    : allLags(order);
+  if ((lags.at(-1) ?? 0) !== order) throw bad("uselags");
+  return {
+    settings: {
+      fit: read("fit", option("fit")) as ModelSettings["fit"],
+      terms: read("terms", option("terms")) as ModelSettings["terms"],
+      cycle: given.has("cycle") ? read("cycle", whole) : null,
+      waves: given.has("waves") ? read("waves", whole) : null,
+      steps: read(
+        "steps",
+        (value) => spreadSteps(OPTIONS.steps.parse(value) as never, series),
+        spreadSteps([[]], series)!,
+      ),
+      longRun: null,
+      movingAverage: 0,
+      pull: 0.2,
+      fade: 1,
+      lags,
+    },
+    series,
+    drivers: read("drivers", whole, 0),
+    rows: read("n", whole),
+    start: read("start", whole, 1),
+    sum: read("sum", (value) => value),
+  };
+}
+
+const whole = (text: string): number | undefined => (/^\d{1,8}$/.test(text) ? Number(text) : undefined);
+
+/**
+ * Digest of numbers at 12 significant digits, eight hexadecimal figures: a block that was copied, even through
+ * a file that keeps fewer digits than memory does, keeps its digest; an edited one does not.
+ * FNV-1a, 32 bits (Fowler, Noll and Vo).
+ */
+export function digest(numbers: readonly Matrix[]): string {
+  const text = numbers
+    .flatMap((matrix) => matrix.flatMap((row) => row.map((v) => (v === 0 ? "0" : v.toPrecision(12)))))
+    .join(" ");
+  let hash = 0x811c9dc5;
+  for (let i = 0; i < text.length; i++) hash = Math.imul(hash ^ text.charCodeAt(i), 0x01000193);
+  return (hash >>> 0).toString(16).padStart(8, "0");
+}

@@ -1,0 +1,4 @@
+/** Every sentence a user reads in English. */
+export * from "./en/headings";
+export * from "./en/issues";
+export * from "./en/readings";

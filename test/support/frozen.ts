@@ -1,0 +1,8 @@
+/** Freezes nested arrays and objects, so that a function that changes its input fails loudly. */
+export function frozen<T>(value: T): T {
+  if (typeof value === "object" && value !== null && !Object.isFrozen(value)) {
+    Object.freeze(value);
+    Object.values(value).forEach(frozen);
+  }
+  return value;
+}
