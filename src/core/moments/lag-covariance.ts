@@ -54,8 +54,8 @@ export function lagCorrelations(x: Matrix, lags: readonly number[], divisor: Div
   const constant = lengths.findIndex((length) => length === 0);
   if (constant >= 0) throw new Issue({ code: "constant-series", series: constant });
   const scaled = x.map((row, t) => row.map((_, j) => columns[j][t] / lengths[j]));
-  const deviations = lagCovariances(scaled, [0], "n")[0].map((row, i) => Math.sqrt(row[i]));
+  const [variance] = lagCovariances(scaled, [0]);
   return lagCovariances(scaled, lags, divisor).map((gamma) =>
-    gamma.map((row, i) => row.map((v, j) => v / deviations[i] / deviations[j])),
+    gamma.map((row, i) => row.map((v, j) => v / Math.sqrt(variance[i][i] * variance[j][j]))),
   );
 }

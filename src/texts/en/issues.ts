@@ -155,7 +155,7 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
   "constant-series": ({ series }, wording) =>
     `Series ${wording.series[series]} never changes. Leave it out: a constant can neither lead nor follow.`,
   "exact-combination": ({ columns }, wording) =>
-    `${relationWords(columns, wording)} exactly. ${relationRemedy(columns)}`,
+    `${relationWords(columns, wording)} exactly. ${relationRemedy(columns, wording)}`,
   "predicted-exactly": ({ order }) =>
     `At order ${order} some series is predicted without any error, so orders cannot be compared. Look for a series that is a shifted or scaled copy of others.`,
   "singular-system": () =>
@@ -164,7 +164,7 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `This model is not stable: its largest root is ${modulus.toFixed(4)}, so it has no stationary state. Use differences, or correct the coefficients.`,
   "no-lags": () => "This model has order 0: no lags, so there are no roots to show.",
   "too-large": () =>
-    "The numbers are too large to compute with. Divide the series by a power of ten, such as 1,000,000.",
+    "Some numbers run beyond what a sheet can hold. Divide the series by a power of ten; if a long forecast explodes, look at the largest root with ROOTS.",
   "too-many-cells": ({ cells, limit }) =>
     `The result would have ${grouped(cells)} cells; at most ${grouped(limit)} are allowed. Ask for fewer lags, series or rows ahead.`,
 };
@@ -216,11 +216,11 @@ function relationWords(columns: readonly WeightedColumn[], wording: Wording): st
 
 const countWords = ["none", "one", "two", "three", "four", "five", "six", "seven", "eight", "nine"];
 
-function relationRemedy(columns: readonly WeightedColumn[]): string {
+function relationRemedy(columns: readonly WeightedColumn[], wording: Wording): string {
   const removable = columns.filter(
     ({ column }) => column.kind === "series" || column.kind === "driver" || column.kind === "lag",
   );
-  if (removable.length === 1) return "Remove it.";
+  if (removable.length === 1) return `Remove ${columnWords(removable[0].column, wording)}.`;
   return removable.length === 0
     ? "Use fewer terms or more rows."
     : `Remove one of the ${countWords[removable.length] ?? removable.length}.`;
