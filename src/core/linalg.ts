@@ -66,7 +66,7 @@ export interface ColumnFactor {
  */
 export function factorColumns(x: Matrix): { factor: ColumnFactor } | { relation: ExactRelation } {
   const width = x[0]?.length ?? 0;
-  const lengths = Array.from({ length: width }, (_, j) => Math.hypot(...x.map((row) => row[j])));
+  const lengths = Array.from({ length: width }, (_, j) => columnLength(x, j));
   const zero = lengths.findIndex((length) => length === 0);
   if (zero >= 0) return { relation: { columns: [zero], weights: [1] } };
   if (!lengths.every(Number.isFinite)) throw new Issue({ code: "too-large" });
@@ -75,6 +75,16 @@ export function factorColumns(x: Matrix): { factor: ColumnFactor } | { relation:
   const weak = upper.findIndex((row, j) => Math.abs(row[j]) < PIVOT_FLOOR);
   if (weak >= 0) return { relation: relationEndingAt(upper, lengths, weak) };
   return { factor: { lengths, upper, qr } };
+}
+
+/** Length of a column, its largest entry taken out first so that no square runs out of range. */
+function columnLength(x: Matrix, j: number): number {
+  let top = 0;
+  for (const row of x) if (!(Math.abs(row[j]) <= top)) top = Math.abs(row[j]);
+  if (top === 0 || !Number.isFinite(top)) return top;
+  let sum = 0;
+  for (const row of x) sum += (row[j] / top) ** 2;
+  return top * Math.sqrt(sum);
 }
 
 /** Column `last` of the scaled matrix equals a combination of those before it; weights in the original units. */
