@@ -159,11 +159,41 @@ export interface Eigenvalue {
   readonly imaginary: number;
 }
 
-/** Eigenvalues of a general square matrix, in the library's order. */
+/**
+ * Eigenvalues of a general square matrix, in the library's order; series in very different units do no harm.
+ * @throws Issue "too-large"
+ */
 export function eigenvalues(a: Matrix): Eigenvalue[] {
-  if (a.length === 0) return [];
-  const { realEigenvalues, imaginaryEigenvalues } = new EigenvalueDecomposition(dense(a));
-  return realEigenvalues.map((real, i) => ({ real, imaginary: imaginaryEigenvalues[i] }));
+  const top = Math.max(0, ...a.flatMap((row) => row.map(Math.abs)));
+  if (top === 0) return a.map(() => ({ real: 0, imaginary: 0 }));
+  if (!Number.isFinite(top)) throw new Issue({ code: "too-large" });
+  // squares of numbers near the end of the range overflow, and the library then never comes back
+  const unit = 2 ** Math.floor(Math.log2(top));
+  const scaled = balanced(a.map((row) => row.map((v) => v / unit)));
+  const { realEigenvalues, imaginaryEigenvalues } = new EigenvalueDecomposition(dense(scaled));
+  return realEigenvalues.map((real, i) => ({ real: real * unit, imaginary: imaginaryEigenvalues[i] * unit }));
+}
+
+/**
+ * A matrix with the same eigenvalues whose rows and columns are of like size: D⁻¹·A·D, D of powers of two, exact.
+ * Source: Parlett and Reinsch (1969), Numerische Mathematik 13, 293–304
+ */
+function balanced(a: Matrix): MutableMatrix {
+  const out = a.map((row) => [...row]);
+  for (let moved = true; moved;) {
+    moved = false;
+    for (let i = 0; i < out.length; i++) {
+      const rowSize = out[i].reduce((sum, v, j) => (j === i ? sum : sum + Math.abs(v)), 0);
+      const columnSize = out.reduce((sum, row, j) => (j === i ? sum : sum + Math.abs(row[i])), 0);
+      if (rowSize === 0 || columnSize === 0) continue;
+      const factor = 2 ** Math.round(Math.log2(rowSize / columnSize) / 2);
+      if (columnSize * factor + rowSize / factor >= 0.95 * (columnSize + rowSize)) continue;
+      out[i] = out[i].map((v) => v / factor);
+      for (const row of out) row[i] *= factor;
+      moved = true;
+    }
+  }
+  return out;
 }
 
 /** Eigenvalues (falling) and orthonormal eigenvectors (columns) of a symmetric matrix. */

@@ -19,14 +19,14 @@ export function toCell(raw: unknown): Cell {
   if (typeof raw === "number") return Number.isFinite(raw) ? raw : new CellError("#NUM!");
   if (typeof raw === "string" || typeof raw === "boolean") return raw;
   if (raw instanceof CellError) return raw;
-  if (typeof raw === "bigint") return Number(raw);
-  if (typeof raw === "object") {
-    const rich = raw as { type?: unknown; basicValue?: unknown; code?: unknown };
-    if (rich.type === "Error") return new CellError(String(rich.basicValue ?? "#VALUE!"));
-    if ("basicValue" in rich) return toCell(rich.basicValue);
-    if (typeof rich.code === "string") return new CellError(rich.code);
-  }
-  return String(raw);
+  if (typeof raw === "bigint") return toCell(Number(raw));
+  if (typeof raw !== "object") return new CellError("#VALUE!");
+  const { type, basicValue, code, text } = raw as Record<string, unknown>;
+  if (type === "Error") return new CellError(typeof basicValue === "string" ? basicValue : "#VALUE!");
+  if (basicValue !== undefined && typeof basicValue !== "object") return toCell(basicValue);
+  if (typeof code === "string") return new CellError(code);
+  // an entity shows its text; anything else is what arithmetic on it would give
+  return typeof text === "string" ? toCell(text) : new CellError("#VALUE!");
 }
 
 export const isBlank = (cell: Cell): cell is null =>

@@ -1,7 +1,7 @@
 import { Issue, type BlockFault } from "../core/issue";
 import type { Matrix } from "../core/matrix";
 import type { VarModel } from "../core/var/model";
-import { regressorsOf } from "../core/var/regressors";
+import { regressorCount, regressorsOf } from "../core/var/regressors";
 import { isBlank, type Cell, type OutTable } from "./cell";
 import { covarianceLabel, regressorLabel, type Names } from "./labels";
 import { digest, formatTag, isTag, parseTag } from "./model-tag";
@@ -34,8 +34,11 @@ export function readModelBlock(cells: readonly (readonly Cell[])[]): ModelBlock 
   if (cells.length === 1 && cells[0].length === 1) throw fault({ kind: "one-cell" });
   const tag = parseTag(tagCell);
   const block = trim(cells);
+  // counted before anything is laid out: a damaged tag may announce millions of rows
+  const count =
+    regressorCount(tag.settings, tag.series, tag.drivers) + tag.series * tag.settings.movingAverage;
+  requireShape(block, 1 + count + tag.series, 1 + tag.series);
   const regressors = regressorsOf(tag.settings, tag.series, tag.drivers);
-  requireShape(block, 1 + regressors.length + tag.series, 1 + tag.series);
   const names = readNames(block, regressors.length - tag.drivers, tag.drivers);
   refuseMoved(
     block,
@@ -72,7 +75,7 @@ function tagElsewhere(cells: readonly (readonly Cell[])[]): BlockFault {
 /** Without the all-blank rows and columns after the block, which a generous selection takes along. */
 function trim(cells: readonly (readonly Cell[])[]): readonly (readonly Cell[])[] {
   const height = cells.findLastIndex((row) => !row.every(isBlank)) + 1;
-  const width = Math.max(...cells.map((row) => row.findLastIndex((cell) => !isBlank(cell)) + 1));
+  const width = cells.reduce((w, row) => Math.max(w, row.findLastIndex((cell) => !isBlank(cell)) + 1), 0);
   return cells.slice(0, height).map((row) => row.slice(0, width));
 }
 

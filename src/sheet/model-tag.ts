@@ -63,20 +63,26 @@ export function parseTag(text: string): Tag {
     (value: string) =>
       OPTIONS[key].parse(value);
   const order = read("p", OPTIONS.maxorder.parse);
-  const series = read("series", whole);
+  const series = read("series", (value) => columns(value) || undefined);
   const lags = given.has("uselags")
     ? (read("uselags", option("uselags")) as readonly number[])
     : allLags(order);
   if ((lags.at(-1) ?? 0) !== order) throw bad("uselags");
+  const cycle = given.has("cycle") ? read("cycle", option("cycle")) : null;
+  const waves = given.has("waves") ? read("waves", option("waves")) : null;
+  if (waves !== null && (cycle === null || waves > cycle / 2)) throw bad("waves");
   return {
     settings: {
       fit: read("fit", option("fit")) as ModelSettings["fit"],
       terms: read("terms", option("terms")) as ModelSettings["terms"],
-      cycle: given.has("cycle") ? read("cycle", whole) : null,
-      waves: given.has("waves") ? read("waves", whole) : null,
+      cycle,
+      waves,
       steps: read(
         "steps",
-        (value) => spreadSteps(OPTIONS.steps.parse(value) as never, series),
+        (value) => {
+          const plan = OPTIONS.steps.parse(value);
+          return plan && spreadSteps(plan, series);
+        },
         spreadSteps([[]], series)!,
       ),
       longRun: null,
@@ -86,14 +92,17 @@ export function parseTag(text: string): Tag {
       lags,
     },
     series,
-    drivers: read("drivers", whole, 0),
+    drivers: read("drivers", columns, 0),
     rows: read("n", whole),
-    start: read("start", whole, 1),
+    start: read("start", OPTIONS.start.parse, 1),
     sum: read("sum", (value) => value),
   };
 }
 
 const whole = (text: string): number | undefined => (/^\d{1,8}$/.test(text) ? Number(text) : undefined);
+
+/** A number of columns that a sheet can have. */
+const columns = (text: string): number | undefined => (/^\d{1,5}$/.test(text) ? Number(text) : undefined);
 
 /**
  * Digest of numbers at 12 significant digits, eight hexadecimal figures: a block that was copied, even through

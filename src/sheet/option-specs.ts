@@ -35,9 +35,9 @@ interface OptionSpec<T> {
 
 /** A number with a decimal point or a decimal comma. */
 export function parseNumber(text: string): number | undefined {
-  return /^[+-]?(\d+([.,]\d*)?|[.,]\d+)(e[+-]?\d+)?$/i.test(text)
-    ? Number(text.replace(",", "."))
-    : undefined;
+  if (!/^[+-]?(\d+([.,]\d*)?|[.,]\d+)(e[+-]?\d+)?$/i.test(text)) return undefined;
+  const value = Number(text.replace(",", "."));
+  return Number.isFinite(value) ? value : undefined;
 }
 
 const choice = <T extends string>(...values: readonly T[]): OptionSpec<T> => ({

@@ -17,7 +17,7 @@ export function readCell(raw: unknown, argument: string, allowed: Allowed): Cell
 export function readWhole(raw: unknown, argument: string, from: number, to: number | null): number {
   const allowed: Allowed = { kind: "whole", from, to };
   const cell = readCell(raw, argument, allowed);
-  if (typeof cell === "number" && Number.isInteger(cell) && cell >= from && (to === null || cell <= to))
+  if (typeof cell === "number" && Number.isSafeInteger(cell) && cell >= from && (to === null || cell <= to))
     return cell;
   throw new Issue({ code: "bad-argument", argument, found: describeCell(cell), allowed });
 }

@@ -7,7 +7,7 @@ import { largestOrder, requireRows } from "./rows-needed";
 import { allLags, type Criterion, type ModelSettings, type Shape } from "./settings";
 import type { SteppedSample } from "./stepped";
 import { refuseExactSeries } from "./exact";
-import { termNames } from "./terms";
+import { termCount } from "./terms";
 
 /** One order's figures; all orders of a comparison share the same rows. */
 export interface OrderRow {
@@ -53,10 +53,7 @@ export function compareOrders(sample: SteppedSample, shape: Shape, maxOrder: num
     const logDet = logDeterminant(residualCovariance(residuals, rows));
     if (logDet === null) throw new Issue({ code: "predicted-exactly", order });
     out.push(
-      orderRow(
-        { order, logDet, rows, series, q: termNames(shape).length + drivers + series * order },
-        out.at(-1),
-      ),
+      orderRow({ order, logDet, rows, series, q: termCount(shape) + drivers + series * order }, out.at(-1)),
     );
   }
   return out;
@@ -106,7 +103,7 @@ export function defaultMaxOrder(sample: SteppedSample, shape: Shape): number {
   const series = sample.y[0].length;
   const drivers = sample.drivers[0]?.length ?? 0;
   const cap = Math.max(8, (shape.cycle ?? 0) + 1);
-  const room = Math.floor((sample.y.length / 3 - termNames(shape).length - drivers) / series);
+  const room = Math.floor((sample.y.length / 3 - termCount(shape) - drivers) / series);
   return Math.max(1, Math.min(cap, room));
 }
 
@@ -128,7 +125,7 @@ export function chooseOrder(
     order: top,
     series,
     rows: sample.y.length,
-    need: top + termNames(shape).length + drivers + series + 2,
+    need: top + termCount(shape) + drivers + series + 2,
     largest: largestOrder(shape, sample.y.length, series, drivers),
   });
 }

@@ -1,4 +1,4 @@
-import { termNames, type TermName } from "./terms";
+import { termCount, termNames, type TermName } from "./terms";
 import type { ModelSettings } from "./settings";
 
 /** One row of a model block: what an equation multiplies by a coefficient. */
@@ -26,5 +26,5 @@ export function regressorsOf(settings: ModelSettings, series: number, drivers: n
 
 /** Coefficients per equation, without the moving-average part: q = m + K·|L| + d. */
 export function regressorCount(settings: ModelSettings, series: number, drivers: number): number {
-  return termNames(settings).length + series * settings.lags.length + drivers;
+  return termCount(settings) + series * settings.lags.length + drivers;
 }

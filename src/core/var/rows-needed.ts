@@ -1,5 +1,5 @@
 import { Issue } from "../issue";
-import { termNames } from "./terms";
+import { termCount } from "./terms";
 import { orderOf, type Calendar } from "./settings";
 
 /**
@@ -11,7 +11,7 @@ export function rowsNeeded(
   series: number,
   drivers: number,
 ): number {
-  const coefficients = termNames(calendar).length + drivers + series * calendar.lags.length;
+  const coefficients = termCount(calendar) + drivers + series * calendar.lags.length;
   return orderOf(calendar) + coefficients + series;
 }
 

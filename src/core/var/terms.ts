@@ -27,6 +27,13 @@ export function termNames({ terms, cycle, waves }: Calendar): TermName[] {
   return names;
 }
 
+/** Their number m, by arithmetic alone. */
+export function termCount({ terms, cycle, waves }: Calendar): number {
+  const powers = terms === "constant" ? 1 : terms === "trend" ? 2 : terms === "quadratic" ? 3 : 0;
+  if (cycle === null) return powers;
+  return powers + (waves === null ? cycle - 1 : 2 * waves - (2 * waves === cycle ? 1 : 0));
+}
+
 /** Value of one deterministic regressor at position t (t = 1 at the first row when start is 1). */
 export function termValue(name: TermName, t: number, cycle: number | null): number {
   switch (name.kind) {

@@ -1,7 +1,7 @@
 import type { StepPlan } from "../../core/prepare/steps";
 import { Issue } from "../../core/issue";
 import { defineCall } from "../call";
-import { describeCell, toCells } from "../cell";
+import { describeCell, isBlank, toCells, type Cell } from "../cell";
 import { readSeries, type SeriesBlock } from "../grid";
 import { readPlan } from "../model-plan";
 import { wordingOf } from "../model-call";
@@ -30,16 +30,16 @@ export const steps = defineCall({
 /** The steps argument of STEPS and UNSTEP: text, or one cell per series. */
 export function readStepsArgument(raw: unknown, series: SeriesBlock): StepPlan {
   const allowed = OPTIONS.steps.allowed;
-  const cells = toCells(raw);
-  const single = cells === null || (cells.length === 1 && cells[0].length === 1);
-  const cell = single
-    ? readCell(raw, "steps", allowed)
-    : cells
-        .flat()
-        .map((c) => c ?? "none")
-        .join("|");
-  const plan = typeof cell === "string" ? OPTIONS.steps.parse(cell) : undefined;
-  if (plan === undefined)
-    throw new Issue({ code: "bad-argument", argument: "steps", found: describeCell(cell), allowed });
+  const refused = (cell: Cell) =>
+    new Issue({ code: "bad-argument", argument: "steps", found: describeCell(cell), allowed });
+  const cells = (toCells(raw) ?? [[readCell(raw, "steps", allowed)]]).flat();
+  const words = cells.map((cell) => {
+    if (isBlank(cell)) return "none";
+    if (typeof cell !== "string") throw refused(cell);
+    return cell;
+  });
+  const text = words.join("|");
+  const plan = OPTIONS.steps.parse(text);
+  if (plan === undefined) throw refused(text);
   return readPlan(plan, series.names.length);
 }

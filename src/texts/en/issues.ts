@@ -13,9 +13,13 @@ type Words<C extends IssueCode> = (facts: Extract<IssueFacts, { code: C }>, word
 
 const plural = (count: number, one: string, many = `${one}s`): string =>
   `${grouped(count)} ${count === 1 ? one : many}`;
-const grouped = (value: number): string => value.toLocaleString("en-US");
+const grouped = (value: number): string =>
+  Math.abs(value) < 1e15 ? value.toLocaleString("en-US") : String(value);
 const list = (items: readonly string[], last = "or"): string =>
   items.length < 2 ? (items[0] ?? "") : `${items.slice(0, -1).join(", ")} ${last} ${items.at(-1)}`;
+/** Names of series: of many the first few. */
+const names = (items: readonly string[]): string =>
+  items.length > 5 ? `${items.slice(0, 4).join(", ")} and ${items.length - 4} more` : list(items, "and");
 
 /** Who a sentence is about: "Series price", "Driver temperature", "Plan price". */
 const who = (range: string, name: string): string =>
@@ -128,13 +132,13 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
   "block-needed": ({ found }) =>
     `A model block is needed here, and ${found} is none. Fit one with MODEL and point at its whole spill, F2#.`,
   "block-names": ({ block, series }) =>
-    `The model block is for ${list(block, "and")}; this range holds ${list(series, "and")}. Use the same series in the same order, header included.`,
+    `The model block is for ${names(block)}; this range holds ${names(series)}. Use the same series in the same order, header included.`,
   "block-drivers": ({ block, drivers }) =>
     block.length === 0
-      ? `The model block uses no drivers, but ${list(drivers, "and")} ${drivers.length === 1 ? "is" : "are"} given. Leave the drivers out.`
+      ? `The model block uses no drivers, but ${names(drivers)} ${drivers.length === 1 ? "is" : "are"} given. Leave the drivers out.`
       : drivers.length === 0
-        ? `The model block needs the drivers ${list(block, "and")}. Point at them in the last argument.`
-        : `The model block needs the drivers ${list(block, "and")}; given are ${list(drivers, "and")}. Use the same in the same order.`,
+        ? `The model block needs the drivers ${names(block)}. Point at them in the last argument.`
+        : `The model block needs the drivers ${names(block)}; given are ${names(drivers)}. Use the same in the same order.`,
   "block-needs-rows": ({ order, rows }) =>
     `This model looks back ${plural(order, "row")}, but the range has only ${plural(rows, "row")} to start from. Use a longer range.`,
   "covariance-asymmetric": ({ row, column }, { series }) =>
@@ -209,9 +213,11 @@ function relationWords(columns: readonly WeightedColumn[], wording: Wording): st
   };
   const side = (positive: boolean) =>
     columns.filter(({ weight }) => weight * last.weight > 0 === positive).map(term);
+  const sum = (terms: readonly string[]) =>
+    terms.length > 4 ? `${terms.slice(0, 3).join(" + ")} + ${terms.length - 3} more` : terms.join(" + ");
   const left = side(false);
   const right = side(true);
-  return left.length === 0 ? `${right.join(" + ")} = 0` : `${left.join(" + ")} = ${right.join(" + ")}`;
+  return left.length === 0 ? `${sum(right)} = 0` : `${sum(left)} = ${sum(right)}`;
 }
 
 const countWords = ["none", "one", "two", "three", "four", "five", "six", "seven", "eight", "nine"];
