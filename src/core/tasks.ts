@@ -1,5 +1,6 @@
 import { forecastAhead, type AheadRequest } from "./forecast/ahead";
 import { forecastBands, type BandsRequest } from "./forecast/bands";
+import { requireFinite } from "./forecast/finite";
 import type { Matrix } from "./matrix";
 import { lagCorrelations, lagCovariances, type Divisor } from "./moments/lag-covariance";
 import { applySteps, undoSteps, type StepPlan } from "./prepare/steps";
@@ -42,7 +43,7 @@ export const tasks = {
   lagCorrelation: ({ series, lags, divisor }: LagRequest) => lagCorrelations(series, lags, divisor),
   steps: ({ series, plan }: StepsRequest) => applySteps(series, plan),
   unstep: ({ series, plan, values }: StepsRequest & { readonly values: Matrix }) =>
-    undoSteps(series, plan, values),
+    requireFinite(undoSteps(series, plan, values)),
   order: ({ sample, shape, maxOrder }: OrderRequest) =>
     compareOrders(stepSample(sample, shape.steps), shape, maxOrder),
   fit: (request: ModelRequest) => fitModel(request),

@@ -106,12 +106,15 @@ const columns = (text: string): number | undefined => (/^\d{1,5}$/.test(text) ? 
 
 /**
  * Digest of numbers at 12 significant digits, eight hexadecimal figures: a block that was copied, even through
- * a file that keeps fewer digits than memory does, keeps its digest; an edited one does not.
+ * a file that keeps 15 digits where memory has 17, keeps its digest (rounded to 15 first, or a last 5 would be
+ * rounded twice); an edited one does not.
  * FNV-1a, 32 bits (Fowler, Noll and Vo).
  */
 export function digest(numbers: readonly Matrix[]): string {
   const text = numbers
-    .flatMap((matrix) => matrix.flatMap((row) => row.map((v) => (v === 0 ? "0" : v.toPrecision(12)))))
+    .flatMap((matrix) =>
+      matrix.flatMap((row) => row.map((v) => (v === 0 ? "0" : Number(v.toPrecision(15)).toPrecision(12)))),
+    )
     .join(" ");
   let hash = 0x811c9dc5;
   for (let i = 0; i < text.length; i++) hash = Math.imul(hash ^ text.charCodeAt(i), 0x01000193);

@@ -5,6 +5,7 @@ import type { VarModel } from "../var/model";
 import type { ModelRequest, Sample } from "../var/sample";
 import { stepSample } from "../var/stepped";
 import { pathDeviations } from "./deviations";
+import { requireFinite } from "./finite";
 import { forecastPath } from "./path";
 
 /** With a log or square root the middle and the mean of the forecast differ. */
@@ -33,7 +34,7 @@ export function pointForecast(model: VarModel, sample: Sample, horizon: number, 
   const { forecast } = forecastPath(model, stepSample(sample, steps), horizon);
   const level = integratePath(sample.series, steps, forecast);
   if (point === "median" || steps.every((list) => powerOf(list) === null)) return toMedian(level, steps);
-  return toMean(level, pathDeviations(model, horizon), steps);
+  return toMean(level, requireFinite(pathDeviations(model, horizon)), steps);
 }
 
 /** Back through log and square root: the middle of the distribution. */

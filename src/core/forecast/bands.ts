@@ -9,6 +9,7 @@ import { requireRows } from "../var/rows-needed";
 import type { ModelRequest } from "../var/sample";
 import { orderOf } from "../var/settings";
 import { stepSample, type SteppedSample } from "../var/stepped";
+import { requireFinite } from "./finite";
 import { toMean, toMedian, type AheadRequest } from "./ahead";
 import { coefficientVariances, pathDeviations } from "./deviations";
 import { forecastPath } from "./path";
@@ -42,7 +43,9 @@ export function forecastBands(
   const { forecast, regressors } = forecastPath(model, stepped, horizon);
   const level = integratePath(sample.series, steps, forecast);
   const known = pathDeviations(model, horizon);
-  const deviations = request.bands === "known" ? known : withCoefficients(model, stepped, known, regressors);
+  const deviations = requireFinite(
+    request.bands === "known" ? known : withCoefficients(model, stepped, known, regressors),
+  );
   const miss = (1 - coverage) / (joint ? horizon * model.series : 1);
   const reach = -normalQuantile(miss / 2);
   const limit = (sign: number) =>

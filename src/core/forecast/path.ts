@@ -1,4 +1,5 @@
 import { Issue } from "../issue";
+import { requireFinite } from "./finite";
 import type { Matrix, MutableMatrix } from "../matrix";
 import { regressorRow } from "../var/design";
 import type { VarModel } from "../var/model";
@@ -17,7 +18,7 @@ export interface Path {
 /**
  * Iterates the model's numbers from the last rows of the sample, each forecast feeding the next.
  * @param sample n ≥ p rows; drivers reach n + h rows when the model has any
- * @throws Issue "block-needs-rows"
+ * @throws Issue "block-needs-rows" | "too-large"
  * Source: Lütkepohl (2005), 2.2.2
  */
 export function forecastPath(model: VarModel, sample: SteppedSample, horizon: number): Path {
@@ -41,5 +42,5 @@ export function forecastPath(model: VarModel, sample: SteppedSample, horizon: nu
     regressors.push(z);
     history.push(predictRow(model.coefficients, z, model.series));
   }
-  return { forecast: history.slice(rows), regressors };
+  return { forecast: requireFinite(history.slice(rows)), regressors };
 }
