@@ -1,0 +1,7 @@
+import type { ICustomFunctionsMetadata } from "custom-functions-metadata";
+
+export declare const DEVELOPMENT_URL: string;
+
+export type Metadata = ICustomFunctionsMetadata & { readonly allowErrorForDataTypeAny: true };
+
+export declare function buildMetadata(where: { readonly baseUrl: string }): Promise<Metadata>;
