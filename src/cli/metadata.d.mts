@@ -4,4 +4,7 @@ export declare const DEVELOPMENT_URL: string;
 
 export type Metadata = ICustomFunctionsMetadata & { readonly allowErrorForDataTypeAny: true };
 
-export declare function buildMetadata(where: { readonly baseUrl: string }): Promise<Metadata>;
+export declare function buildMetadata(where: {
+  readonly baseUrl: string;
+  readonly sources?: string;
+}): Promise<Metadata>;

@@ -15,12 +15,14 @@ const FUNCTIONS = fileURLToPath(new URL("../functions/", import.meta.url));
 
 /**
  * The functions.json of the add-in, made from the comments over the sheet functions.
- * @param {{ baseUrl: string }} where  the folder that serves the add-in, ending in a slash
+ * @param {object} where
+ * @param {string} where.baseUrl  the folder that serves the add-in, ending in a slash
+ * @param {string} [where.sources]  the folder of the sheet functions
  * @returns {Promise<Metadata>}
  * @throws Error when the generator complains, an id occurs twice or a declared function is missing
  */
-export async function buildMetadata({ baseUrl }) {
-  const files = wrapperFiles();
+export async function buildMetadata({ baseUrl, sources = FUNCTIONS }) {
+  const files = wrapperFiles(sources);
   const { metadataJson, errors } = await generator.generateCustomFunctionsMetadata(files);
   const { functions = [], ...rest } = metadataJson === "" ? {} : JSON.parse(metadataJson);
   const ids = functions.map(({ id }) => id);
@@ -34,11 +36,11 @@ export async function buildMetadata({ baseUrl }) {
 }
 
 /** The sources that declare sheet functions, in the order of their names. */
-function wrapperFiles() {
-  return readdirSync(FUNCTIONS)
+function wrapperFiles(folder) {
+  return readdirSync(folder)
     .filter((name) => name.endsWith(".ts"))
     .sort()
-    .map((name) => join(FUNCTIONS, name))
+    .map((name) => join(folder, name))
     .filter((file) => readFileSync(file, "utf8").includes("@customfunction"));
 }
 
