@@ -12,7 +12,7 @@ import "../support/sheet";
 const folder = new URL("../../src/functions/", import.meta.url);
 const modules = await Promise.all(
   readdirSync(folder)
-    .filter((file) => file.endsWith(".ts"))
+    .filter((file) => file.endsWith(".ts") && file !== "register.ts")
     .map((file) => import(new URL(file, folder).pathname) as Promise<Record<string, unknown>>),
 );
 
