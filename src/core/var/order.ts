@@ -1,5 +1,6 @@
 import { Issue } from "../issue";
-import { logDeterminant } from "../linalg";
+import { logDeterminant, PIVOT_FLOOR } from "../linalg";
+import type { Matrix } from "../matrix";
 import { chiSquareUpper } from "../distributions";
 import { designOf } from "./design";
 import { leastSquares, residualCovariance } from "./least-squares";
@@ -49,15 +50,23 @@ export function compareOrders(sample: SteppedSample, shape: Shape, maxOrder: num
   const rows = sample.y.length - maxOrder;
   const out: OrderRow[] = [];
   for (let order = 0; order <= maxOrder; order++) {
-    const { residuals } = leastSquares(designOf(sample, candidate(shape, order), maxOrder));
+    const design = designOf(sample, candidate(shape, order), maxOrder);
+    const { residuals } = leastSquares(design);
     const logDet = logDeterminant(residualCovariance(residuals, rows));
-    if (logDet === null) throw new Issue({ code: "predicted-exactly", order });
+    if (logDet === null || someVanish(residuals, design.y))
+      throw new Issue({ code: "predicted-exactly", order });
     out.push(
       orderRow({ order, logDet, rows, series, q: termCount(shape) + drivers + series * order }, out.at(-1)),
     );
   }
   return out;
 }
+
+/** True when what is left of some series is rounding noise, by the rule for exact combinations. */
+const someVanish = (residuals: Matrix, y: Matrix): boolean =>
+  y[0].some((_, k) => length(residuals, k) < PIVOT_FLOOR * length(y, k));
+
+const length = (x: Matrix, k: number): number => Math.sqrt(x.reduce((sum, row) => sum + row[k] ** 2, 0));
 
 function orderRow(
   {
