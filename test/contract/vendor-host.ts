@@ -11,14 +11,12 @@ import { createContext, runInContext, type Context } from "node:vm";
 export interface VendorHost {
   /** The ids that the built functions have associated. */
   readonly registered: readonly string[];
-  call(name: string, params: readonly unknown[], kind?: ParameterKind): Promise<Answer>;
+  call(...call: CallOf): Promise<Answer>;
   /**
    * Many calls in one message. The library posts results 50 ms after a call and then not again for half a
    * second, so calls made one after the other wait half a second each.
    */
   callAll(calls: readonly CallOf[]): Promise<Answer[]>;
-  /** Takes a call back, as the host does when its cell is edited meanwhile. */
-  cancel(invocationId: number): void;
 }
 
 export type CallOf = readonly [name: string, params: readonly unknown[], kind?: ParameterKind];
@@ -51,7 +49,6 @@ const CODES: Readonly<Record<number, string>> = {
 };
 
 const INVOKE = 1000;
-const CANCEL = 1001;
 const LONGEST_WAIT = 20_000;
 
 const LIBRARY = createRequire(import.meta.url).resolve(
@@ -78,8 +75,7 @@ export function openVendorHost(bundle = BUILT_FUNCTIONS): VendorHost {
   const callAll = (calls: readonly CallOf[]): Promise<Answer[]> => {
     const ids = calls.map(() => ++lastId);
     const answers = ids.map((id, i) => answerTo(id, calls[i][0], waiting));
-    bridge.post(
-      INVOKE,
+    bridge.invoke(
       calls.map(([name, params, kind = "plain"], i) => [ids[i], name, params, null, FLAGS[kind], null]),
     );
     return Promise.all(answers);
@@ -88,7 +84,6 @@ export function openVendorHost(bundle = BUILT_FUNCTIONS): VendorHost {
     registered,
     callAll,
     call: async (...call) => (await callAll([call]))[0],
-    cancel: (invocationId) => bridge.post(CANCEL, [{ invocationId }]),
   };
 }
 
@@ -121,7 +116,7 @@ interface Bridge {
   sendMessageToHost(text: string): void;
   /** Set by the library. */
   onMessageFromHost(text: string): void;
-  post(type: number, messages: readonly unknown[]): void;
+  invoke(messages: readonly unknown[]): void;
 }
 
 /** The two ends that the library and the spreadsheet talk over. */
@@ -134,8 +129,8 @@ function openBridge(onResult: (result: Result) => void): Bridge {
       setTimeout(() => bridge.onMessageFromHost(JSON.stringify({ ...request, message })), 1);
     },
     onMessageFromHost: () => undefined,
-    post(type, messages) {
-      const entries = messages.map((message) => [1, type, null, message, null]);
+    invoke(messages) {
+      const entries = messages.map((message) => [1, INVOKE, null, message, null]);
       bridge.onMessageFromHost(JSON.stringify({ type: 3, message: { entries } }));
     },
   };
