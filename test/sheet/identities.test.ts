@@ -24,7 +24,6 @@ const rows = inventedSeries(90, 3);
 const positive = rows.map((row) => row.map((v, k) => Math.exp(v / (20 * (k + 1)))));
 const table = withHeader(NAMES, rows);
 
-// eslint-disable-next-line @typescript-eslint/no-explicit-any -- any call of the contract
 type AnyCall = Parameters<typeof ask>[0];
 const numbers = (call: AnyCall, args: Parameters<typeof ask>[1]): Matrix => ask(call, args) as number[][];
 /** Without header row and the given number of label columns. */

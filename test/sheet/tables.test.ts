@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { Issue } from "../../src/core/issue";
+import { type Issue } from "../../src/core/issue";
 import type { OutTable } from "../../src/sheet/cell";
 import {
   CELL_LIMIT,

@@ -17,11 +17,11 @@ Object.assign(globalThis, {
 });
 
 /** Calls a sheet function the way a wrapper does. */
-// eslint-disable-next-line @typescript-eslint/no-explicit-any -- any call of the contract
+
 export const ask = (call: Call<any, any>, args: RawArguments): OutTable => answer(call, args);
 
 /** The error that a call ends in, as "#CODE message"; the result when it does not fail. */
-// eslint-disable-next-line @typescript-eslint/no-explicit-any -- any call of the contract
+
 export function errorOf(call: Call<any, any>, args: RawArguments): string | OutTable {
   try {
     return ask(call, args);

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { Issue } from "../../../src/core/issue";
+import { type Issue } from "../../../src/core/issue";
 import { multiply, symmetricEigen, transpose } from "../../../src/core/linalg";
 import { zeros, type Matrix } from "../../../src/core/matrix";
 import { mean } from "../../../src/core/moments/centre";

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { Issue } from "../../../src/core/issue";
+import { type Issue } from "../../../src/core/issue";
 import { fitModel } from "../../../src/core/var/fit";
 import { bestOrder, chooseOrder, compareOrders, defaultMaxOrder } from "../../../src/core/var/order";
 import { regressorCount, regressorsOf } from "../../../src/core/var/regressors";
