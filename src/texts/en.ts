@@ -2,3 +2,4 @@
 export * from "./en/headings";
 export * from "./en/issues";
 export * from "./en/readings";
+export * from "./en/pane";

@@ -1,0 +1,3 @@
+import type { IncomingMessage, ServerResponse } from "node:http";
+
+export declare function answerFromDist(request: IncomingMessage, response: ServerResponse): void;
