@@ -1,5 +1,6 @@
 import { existsSync, readFileSync } from "node:fs";
 import { createRequire } from "node:module";
+import { fileURLToPath } from "node:url";
 import { createContext, runInContext, type Context } from "node:vm";
 
 /**
@@ -54,7 +55,7 @@ const LONGEST_WAIT = 20_000;
 const LIBRARY = createRequire(import.meta.url).resolve(
   "@microsoft/office-js/dist/custom-functions-runtime.debug.js",
 );
-export const BUILT_FUNCTIONS = new URL("../../dist/functions.js", import.meta.url).pathname;
+export const BUILT_FUNCTIONS = fileURLToPath(new URL("../../dist/functions.js", import.meta.url));
 
 export function openVendorHost(bundle = BUILT_FUNCTIONS): VendorHost {
   if (!existsSync(bundle)) throw new Error(`${bundle} is missing. Run npm run build first.`);

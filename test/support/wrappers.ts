@@ -8,7 +8,7 @@ const NO_WRAPPERS = ["answer.ts", "register.ts"];
 const modules = await Promise.all(
   readdirSync(folder)
     .filter((file) => file.endsWith(".ts") && !NO_WRAPPERS.includes(file))
-    .map((file) => import(new URL(file, folder).pathname) as Promise<Record<string, SheetFunction>>),
+    .map((file) => import(new URL(file, folder).href) as Promise<Record<string, SheetFunction>>),
 );
 
 type SheetFunction = (...args: readonly unknown[]) => unknown;
