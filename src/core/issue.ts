@@ -73,6 +73,7 @@ export type IssueFacts =
   | { readonly code: "option-without-value"; readonly text: string }
   | { readonly code: "bad-option"; readonly key: string; readonly found: string; readonly allowed: Allowed }
   | { readonly code: "option-needs"; readonly key: string; readonly needs: string }
+  | { readonly code: "fit-without-drivers"; readonly fit: string }
   | { readonly code: "options-clash"; readonly key: string; readonly other: string }
   | {
       readonly code: "option-against-block";

@@ -109,11 +109,12 @@ export function solveColumns({ lengths, qr }: ColumnFactor, y: Matrix): MutableM
 
 /**
  * Solves a·X = b for a square matrix that has no exact relation among its (scaled) columns.
- * @throws Issue "singular-system"
+ * @throws Issue "singular-system" | "too-large"
  */
 export function solveSquare(a: Matrix, b: Matrix): MutableMatrix {
   const rowScale = a.map((row) => Math.max(...row.map(Math.abs)));
-  if (rowScale.some((s) => s === 0 || !Number.isFinite(s))) throw new Issue({ code: "singular-system" });
+  if (!rowScale.every(Number.isFinite)) throw new Issue({ code: "too-large" });
+  if (rowScale.includes(0)) throw new Issue({ code: "singular-system" });
   const lu = new LuDecomposition(dense(a.map((row, i) => row.map((v) => v / rowScale[i]))));
   const pivots = plain(lu.upperTriangularMatrix).map((row, i) => Math.abs(row[i]));
   if (Math.min(...pivots) < 1e-14 * Math.max(...pivots)) throw new Issue({ code: "singular-system" });

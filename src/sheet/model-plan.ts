@@ -1,6 +1,6 @@
 import { Issue } from "../core/issue";
 import type { ModelPlan } from "../core/var/sample";
-import { allLags, orderOf, type ModelSettings, type Shape } from "../core/var/settings";
+import { allLags, orderOf, type FitMethod, type ModelSettings, type Shape } from "../core/var/settings";
 import { requireOrder, type Extent } from "../core/var/rows-needed";
 import { planLoss, type StepPlan } from "../core/prepare/steps";
 import { describeCell, toCells, type Cell } from "./cell";
@@ -24,6 +24,9 @@ export const SETTING_KEYS = [
 export const CHOICE_KEYS = ["criterion", "maxorder"] as const satisfies readonly OptionKey[];
 /** Every key that a call with a model takes. */
 export const MODEL_KEYS = [...SETTING_KEYS, "start", ...CHOICE_KEYS] as const satisfies readonly OptionKey[];
+
+/** Fits from the moments of the series alone: an outside series has no place in them. */
+const MOMENT_FITS: readonly FitMethod[] = ["yule-walker", "nuttall-strand"];
 
 /** The model argument as it was written. */
 export type ModelArgument =
@@ -66,7 +69,7 @@ export type BlockUse = "numbers" | "settings";
 
 /**
  * Joins the model argument, the options and the series into one plan, and refuses what contradicts.
- * @throws Issue "options-clash" | "option-needs" | "option-against-block" | "block-names" | "block-drivers" | …
+ * @throws Issue "options-clash" | "option-needs" | "fit-without-drivers" | "option-against-block" | "block-names" | "block-drivers" | …
  */
 export function planModel(
   argument: ModelArgument,
@@ -76,6 +79,8 @@ export function planModel(
 ): ModelPlan {
   if (argument.kind === "block") return planFromBlock(argument.block, options, series, drivers, use);
   const shape = readShape(options, series.names.length);
+  if (drivers.names.length > 0 && MOMENT_FITS.includes(shape.fit))
+    throw new Issue({ code: "fit-without-drivers", fit: shape.fit });
   if (argument.kind === "auto" && !options.uselags) {
     return {
       kind: "auto",
@@ -125,12 +130,12 @@ export function readShape(options: Options, series: number): Shape {
   };
 }
 
-/** What is there to fit on once the steps have used up their rows. */
-export const extentOf = (shape: Shape, series: SeriesBlock, drivers: DriverBlock): Extent => ({
-  rows: Math.max(0, series.rows.length - planLoss(shape.steps)),
-  series: series.names.length,
-  drivers: drivers.names.length,
-});
+/** What is there to fit on once the steps have used up their rows. @throws Issue "steps-leave-nothing" */
+export function extentOf(shape: Shape, series: SeriesBlock, drivers: DriverBlock): Extent {
+  const [lost, rows] = [planLoss(shape.steps), series.rows.length];
+  if (lost >= rows) throw new Issue({ code: "steps-leave-nothing", lost, rows });
+  return { rows: rows - lost, series: series.names.length, drivers: drivers.names.length };
+}
 
 /** @throws Issue "steps-count" */
 export function readPlan(lists: StepPlan, series: number): StepPlan {

@@ -1,37 +1,25 @@
-import { readdirSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { frozen } from "../support/frozen";
 import { goodValue, hostileMixes, hostileValues, type Args } from "../support/hostile";
 import "../support/sheet";
+import { wrappers } from "../support/wrappers";
 
 /**
  * Every function of the sheet, whatever it is given, answers with a rectangle of finite numbers, text and logical
  * values, or with one error whose message a person can act on; quickly, and without touching what it was given.
  * Functions are found by themselves: every exported function of src/functions with a name in capitals.
  */
-const folder = new URL("../../src/functions/", import.meta.url);
-const modules = await Promise.all(
-  readdirSync(folder)
-    .filter((file) => file.endsWith(".ts") && file !== "register.ts")
-    .map((file) => import(new URL(file, folder).pathname) as Promise<Record<string, unknown>>),
-);
-
 interface SheetFunction {
   readonly name: string;
   readonly parameters: readonly string[];
   readonly call: (...args: Args) => unknown;
 }
 
-const functions: SheetFunction[] = modules
-  .flatMap((exported) => Object.entries(exported))
+const functions: SheetFunction[] = [...wrappers]
   .filter(([name, value]) => /^[A-Z]{3,}$/.test(name) && typeof value === "function")
-  .map(([name, value]) => ({
-    name,
-    parameters: parametersOf(value as () => unknown),
-    call: value as SheetFunction["call"],
-  }));
+  .map(([name, value]) => ({ name, parameters: parametersOf(value), call: value }));
 
-function parametersOf(f: () => unknown): string[] {
+function parametersOf(f: (...args: never[]) => unknown): string[] {
   const inside = /\(([^)]*)\)/.exec(f.toString())![1];
   return inside
     .split(",")
@@ -48,6 +36,10 @@ const PROGRAM_WORDS =
 const BUG_WORDS = "failed on something it should have handled";
 
 const SECONDS = 2;
+
+const FITS = ["least-squares", "yule-walker", "nuttall-strand", "likelihood", "shrinkage"];
+const TERMS = ["constant", "none", "trend", "constant; cycle=4; waves=1; steps=diff"];
+const driver = [["rain"], ...Array.from({ length: 90 }, (_, t) => [Math.sin(t * t)])];
 
 /** What is wrong with an answer, or null. */
 async function faultIn(f: SheetFunction, args: Args): Promise<string | null> {
@@ -143,6 +135,23 @@ describe.each(functions.map((f) => [f.name, f] as const))("%s", (_, f) => {
       what: `${parameter} = ${what}`,
       args: good(f).map((v, i) => (i === at ? value : v)),
     }));
+    expect(await faults(f, table)).toEqual([]);
+  });
+
+  it("answers every estimator with every kind of terms, order and driver", { timeout: 120_000 }, async () => {
+    if (!f.parameters.includes("options") || !f.parameters.includes("model")) return;
+    const table = FITS.flatMap((fit) =>
+      TERMS.flatMap((terms) =>
+        [0, 1, "auto"].flatMap((model) =>
+          [null, driver].map((drivers) => ({
+            what: `fit=${fit}; terms=${terms}, order ${model}, ${drivers ? "a driver" : "no driver"}`,
+            args: good(f).map(
+              (v, i) => ({ options: `fit=${fit}; terms=${terms}`, model, drivers })[f.parameters[i]] ?? v,
+            ),
+          })),
+        ),
+      ),
+    );
     expect(await faults(f, table)).toEqual([]);
   });
 

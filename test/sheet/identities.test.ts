@@ -243,6 +243,16 @@ describe("steps", () => {
     );
   });
 
+  it("steps that leave no row are refused", () => {
+    const few = { series: positive.slice(0, 4), steps: "diff 4" };
+    const message = "#N/A The steps use up 4 rows, and the range has 4. Use shorter differences or more rows.";
+    expect(errorOf(steps, few)).toBe(message);
+    expect(errorOf(ahead, { series: few.series, horizon: 1, model: 0, options: "steps=diff 4" })).toBe(message);
+    // what continues four rows needs no more than four
+    expect(ask(unstep, { ...few, values: [[0, 0, 0]] })).toEqual([positive[0]]);
+    expect(errorOf(unstep, { ...few, steps: "diff 5", values: [[0, 0, 0]] })).toMatch(/^#N\/A The steps use up 5 rows/);
+  }); // prettier-ignore
+
   it("the steps may stand in cells, one per series", () => {
     expect(ask(steps, { series: positive, steps: [["log", null, "diff"]] })).toEqual(
       ask(steps, { series: positive, steps: "log | none | diff" }),
@@ -348,6 +358,13 @@ describe("drivers", () => {
     const late = driver.map(([v], t) => [t >= 90 ? v + 1 : v]);
     expect(path(rows, late)).not.toEqual(expected);
   });
+
+  it("have no place in a fit from the moments of the series", () => {
+    for (const order_ of [1, null])
+      expect(errorOf(ahead, { series: table, horizon: 4, model: order_, options: "fit=yule-walker", drivers: driver })).toBe(
+        "#VALUE! The fit yule-walker takes no drivers. Leave the drivers out, or use fit=least-squares.",
+      );
+  }); // prettier-ignore
 
   it("a driver that is a scaled copy of the trend is named", () => {
     const line = Array.from({ length: 94 }, (_, t) => [2 * t]);

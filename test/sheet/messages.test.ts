@@ -53,6 +53,7 @@ const examples: readonly IssueFacts[] = [
   { code: "bad-option", key: "uselags", found: "text '0'", allowed: { kind: "list", of: "lags" } },
   { code: "bad-option", key: "start", found: "text '0'", allowed: { kind: "whole", from: 1, to: null } },
   { code: "option-needs", key: "waves", needs: "cycle" },
+  { code: "fit-without-drivers", fit: "yule-walker" },
   { code: "options-clash", key: "criterion", other: "order" },
   { code: "options-clash", key: "criterion", other: "uselags" },
   { code: "options-clash", key: "criterion", other: "block" },

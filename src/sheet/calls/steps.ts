@@ -1,4 +1,4 @@
-import type { StepPlan } from "../../core/prepare/steps";
+import { planLoss, type StepPlan } from "../../core/prepare/steps";
 import { Issue } from "../../core/issue";
 import { defineCall } from "../call";
 import { describeCell, isBlank, toCells, type Cell } from "../cell";
@@ -14,8 +14,11 @@ export const steps = defineCall({
   task: "steps",
   read: (args) => {
     const series = readSeries(args["series"], "series", "allow");
+    const plan = readStepsArgument(args["steps"], series);
+    const [lost, rows] = [planLoss(plan), series.rows.length];
+    if (lost >= rows) throw new Issue({ code: "steps-leave-nothing", lost, rows });
     return {
-      request: { series: series.rows, plan: readStepsArgument(args["steps"], series) },
+      request: { series: series.rows, plan },
       layout: series.hasHeader ? series.names : null,
       wording: wordingOf(series),
     };

@@ -114,6 +114,8 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `For the option ${key}, ${found} will not do. Give ${allowedWords(allowed)}.`,
   "option-needs": ({ key, needs }) =>
     `The option ${key} needs ${needs} beside it. Add ${needs}, or leave ${key} out.`,
+  "fit-without-drivers": ({ fit }) =>
+    `The fit ${fit} takes no drivers. Leave the drivers out, or use fit=least-squares.`,
   "options-clash": ({ key, other }) =>
     other === "block"
       ? `The model block fixes the order, so ${key} has nothing to choose. Leave it out.`
