@@ -2,6 +2,7 @@
  * Correct digits on the NIST reference problems, as a markdown table; written between the markers of DEVELOPERS.md
  * where they stand. Run with `npx tsx test/bench/nist-digits.ts`.
  */
+import { format } from "prettier";
 import { existsSync, readFileSync, writeFileSync } from "node:fs";
 import {
   digits,
@@ -48,7 +49,8 @@ if (existsSync(guide)) {
   const text = readFileSync(guide, "utf8");
   const from = text.indexOf(OPEN);
   const to = text.indexOf(CLOSE);
-  if (from >= 0 && to > from)
-    writeFileSync(guide, `${text.slice(0, from + OPEN.length)}\n\n${table}\n\n${text.slice(to)}`);
-  else console.error(`DEVELOPERS.md has no ${OPEN} … ${CLOSE} to write between.`);
+  if (from >= 0 && to > from) {
+    const written = `${text.slice(0, from + OPEN.length)}\n\n${table}\n\n${text.slice(to)}`;
+    writeFileSync(guide, await format(written, { parser: "markdown", printWidth: 110 }));
+  } else console.error(`DEVELOPERS.md has no ${OPEN} … ${CLOSE} to write between.`);
 }
