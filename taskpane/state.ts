@@ -25,14 +25,21 @@ export function proposedPlace(address: string): string {
   return formatAddress({ ...region, column: region.column + region.columns + 1, rows: 1, columns: 1 });
 }
 
+/** Where the forecast goes, as shown in its field. */
 export const placeOf = (state: PaneState): string => state.place ?? proposedPlace(state.address);
+
+/** The cell meant; without a sheet's name it lies on the sheet of the block. Null when it is none. */
+function corner(state: PaneState): Region | null {
+  const place = parseAddress(placeOf(state));
+  return place && { ...place, sheet: place.sheet ?? parseAddress(state.address)?.sheet ?? null };
+}
 
 /** The region that the forecast will fill, header included; null when the place is no cell. */
 export function forecastRegion(state: PaneState): Region | null {
-  const corner = parseAddress(placeOf(state));
-  if (!corner || !state.reading) return null;
+  const from = corner(state);
+  if (!from || !state.reading) return null;
   return {
-    ...corner,
+    ...from,
     rows: state.horizon + (state.reading.hasHeader ? 1 : 0),
     columns: state.reading.names.length,
   };
@@ -41,6 +48,6 @@ export function forecastRegion(state: PaneState): Region | null {
 /** The formula for a block, written for a cell of the same sheet without the sheet's name. */
 export function forecastFormula(state: PaneState): string {
   const block = parseAddress(state.address)!;
-  const sameSheet = parseAddress(placeOf(state))?.sheet === block.sheet;
+  const sameSheet = corner(state)?.sheet === block.sheet;
   return `=COMOVE.AHEAD(${formatAddress({ ...block, sheet: sameSheet ? null : block.sheet })},${state.horizon})`;
 }

@@ -1,5 +1,6 @@
 import { mountPane } from "../../taskpane/pane";
 import "../../taskpane/pane.css";
+import { demoSelection } from "./demo/book";
 import { blankSwitch } from "./blank-switch";
 import { EmbeddedHost } from "./embedded-host";
 import { FaultNotes } from "./fault-notes";
@@ -18,6 +19,8 @@ async function open(): Promise<void> {
     helpUrl: "help/index.html",
     extras: blankSwitch(around, grid),
   });
+  // a first block is selected, so that the pane has something to say at once
+  grid.api.getActiveWorkbook()?.getActiveSheet().getRange(demoSelection).activate();
   // for whoever drives the page from outside: the browser tests and the measuring script
   Object.assign(globalThis, { comovePage: { grid, host } });
 }

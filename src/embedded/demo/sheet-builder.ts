@@ -28,6 +28,16 @@ export class SheetBuilder {
     return this;
   }
 
+  /** Lines of plain text, one below the other. */
+  notes(row: number, column: number, lines: readonly string[]): this {
+    return this.rows(
+      row,
+      column,
+      lines.map((line) => [line]),
+      NOTE,
+    );
+  }
+
   /** Gives blank cells a look, for the place where a formula will spill. */
   dress(row: number, column: number, height: number, width: number, style: IStyleData): this {
     for (let i = row; i < row + height; i++)

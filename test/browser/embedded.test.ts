@@ -1,0 +1,132 @@
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { isError, SheetPage } from "./sheet-page";
+
+let sheet: SheetPage;
+beforeAll(async () => {
+  sheet = await SheetPage.open();
+});
+afterAll(() => sheet.close());
+
+const FORECAST = '=COMOVE.AHEAD(B4:E160,12,,"cycle=52; waves=1")';
+
+describe("the embedded sheet", () => {
+  it("shows the demo forecast, 12 rows of 4 series under their names, filled by one formula", async () => {
+    const block = await sheet.read("Data!H4:K16");
+    expect(block[0]).toEqual(["landings", "ice", "electricity", "trips"]);
+    expect(block.slice(1).flat().every((v) => typeof v === "number" && Number.isFinite(v))).toBe(true);
+    expect(await sheet.read("Data!L4:L17")).toEqual(Array.from({ length: 14 }, () => [null]));
+    await sheet.shot("data");
+  });
+
+  it("lets the forecast follow when a data cell is changed by keyboard", async () => {
+    const [[before]] = await sheet.read("Data!H5");
+    await sheet.type("Data", "B160", "300");
+    const [[after]] = await sheet.until("Data!H5", ([[v]]) => v !== before);
+    expect(after as number).toBeGreaterThan(before as number);
+  });
+
+  it("spills a typed LAGCORR, and MODEL feeds AHEAD through its spill reference", async () => {
+    await sheet.type("Data", "G23", "=COMOVE.LAGCORR(B4:E160,1)");
+    const lags = await sheet.until("Data!G23:M31", (cells) => typeof cells[8][5] === "number");
+    expect(lags[0]).toEqual(["lag", "series", "landings", "ice", "electricity", "trips", "bound"]);
+    expect(lags[1][2]).toBe(1);
+
+    await sheet.type("Data", "N4", '=comove.model(B4:E160,2,"cycle=52; waves=1")');
+    const model = await sheet.until("Data!N4:R19", (cells) => typeof cells[15][4] === "number");
+    expect(String(model[0][0])).toMatch(/^comove model p=2; .*series=4; n=156; sum=[0-9a-f]{8}$/);
+    await sheet.type("Data", "T4", "=COMOVE.AHEAD(B4:E160,12,N4#)");
+    const ahead = await sheet.until("Data!T4:W16", (cells) => typeof cells[12][3] === "number");
+    await sheet.type("Data", "Y4", '=COMOVE.AHEAD(B4:E160,12,2,"cycle=52; waves=1")');
+    const direct = await sheet.until("Data!Y4:AB16", (cells) => typeof cells[12][3] === "number");
+    expect(ahead).toEqual(direct);
+  });
+
+  it("follows through a chain of spills when the data change", async () => {
+    const [[before]] = await sheet.read("Data!T5");
+    await sheet.type("Data", "B160", "180");
+    await sheet.until("Data!T5", ([[v]]) => typeof v === "number" && v !== before);
+  });
+
+  it("answers #SPILL! when something is in the way, and recovers", async () => {
+    await sheet.type("Data", "U10", "in the way");
+    await sheet.until("Data!T4", ([[v]]) => isError(v, "#SPILL!"));
+    await sheet.clear("Data", "U10");
+    await sheet.until("Data!T4:W16", (cells) => cells[0][0] === "landings" && typeof cells[12][3] === "number");
+  });
+
+  it("keeps dependants of a spill that shrank from going stale", async () => {
+    await sheet.type("Data", "AD4", "=COUNT(AF4:AF40)");
+    await sheet.type("Data", "AF4", "=COMOVE.STEPS(B4:B24,\"none\")");
+    await sheet.until("Data!AD4", ([[v]]) => v === 20);
+    await sheet.type("Data", "AF4", "=COMOVE.STEPS(B4:B9,\"none\")");
+    await sheet.until("Data!AD4", ([[v]]) => v === 5);
+  });
+
+  it("tells in words why a cell holds an error, while that cell is selected", async () => {
+    await sheet.type("Data", "G40", "=COMOVE.AHEAD(B4:E160,0)");
+    await sheet.until("Data!G40", ([[v]]) => isError(v, "#VALUE!"));
+    await sheet.select("Data", "G40");
+    const message = sheet.page.locator("#message");
+    await message.waitFor({ state: "visible" });
+    expect(await message.textContent()).toBe("For horizon, 0 will not do. Give a whole number from 1 to 10,000.");
+    await sheet.shot("error");
+    await sheet.select("Data", "G41");
+    await message.waitFor({ state: "hidden" });
+  });
+
+  it("shows the function's description and arguments while a formula is typed", async () => {
+    await sheet.type("Data", "G44", "=COMOVE.AH", { enter: false });
+    await sheet.page.getByText("COMOVE.AHEAD", { exact: true }).first().waitFor({ state: "visible" });
+    await sheet.page.keyboard.type("EAD(");
+    await sheet.page.getByText("Rows to forecast, 1 to 10,000.").first().waitFor({ state: "visible" });
+    await sheet.shot("typing");
+    await sheet.page.keyboard.press("Escape");
+    await sheet.page.keyboard.press("Escape");
+  });
+
+  it("hands over blanks as nothing or as 0, as the switch says", async () => {
+    await sheet.type("Data", "AH4", "=COMOVE.LAGCOV(AJ4:AJ8,0)");
+    for (const [row, value] of ["3", "5", "", "4", "9"].entries()) {
+      if (value !== "") await sheet.type("Data", `AJ${row + 4}`, value);
+    }
+    await sheet.until("Data!AH4", ([[v]]) => isError(v, "#VALUE!"));
+    await sheet.page.getByLabel("0, as on some older clients").check();
+    // 3, 5, 0, 4, 9: mean 4.2, squares 131 / 5 − 17.64
+    const [[v]] = await sheet.until("Data!AH4", ([[value]]) => typeof value === "number");
+    expect(v as number).toBeCloseTo(8.56, 10);
+    await sheet.page.getByLabel("nothing", { exact: true }).check();
+    await sheet.until("Data!AH4", ([[value]]) => isError(value, "#VALUE!"));
+  });
+
+  it("fills the sheets that walk the job", async () => {
+    const leads = await sheet.until("Leads!A5:G25", (cells) => typeof cells[20][6] === "number");
+    // trips now against landings two weeks earlier: lag 2, row trips, column landings
+    const [, , landings] = leads.find((row) => row[0] === 2 && row[1] === "trips")!;
+    expect(landings as number).toBeGreaterThan(2 * (leads[1][6] as number));
+    expect((await sheet.read("Model!A4"))[0][0]).toMatch(/^comove model p=2/);
+    const roots = await sheet.until("Model!G4:K12", (cells) => typeof cells[8][0] === "number");
+    expect(roots[0]).toEqual(["modulus", "real", "imaginary", "period (rows)", "reading"]);
+    await sheet.until("Model!G16:P22", (cells) => typeof cells[6][1] === "number");
+    const bands = await sheet.until("Forecast!B4:M16", (cells) => typeof cells[12][11] === "number");
+    for (const row of bands.slice(1) as number[][]) {
+      for (let k = 0; k < 12; k += 3) expect(row[k] < row[k + 1] && row[k + 1] < row[k + 2]).toBe(true);
+    }
+    expect(isError((await sheet.read("Blemishes!H4"))[0][0], "#VALUE!")).toBe(true);
+    for (const name of ["Leads", "Model", "Forecast", "Blemishes"]) {
+      await sheet.select(name, "A1");
+      await sheet.page.waitForTimeout(300);
+      await sheet.shot(name.toLowerCase());
+    }
+  });
+
+  it("was quiet: no console errors, no refused content, no request to another host", () => {
+    expect(sheet.complaints).toEqual([]);
+  });
+
+  it("holds the formula it promises", async () => {
+    const formula = await sheet.page.evaluate(
+      () => (globalThis as any).comovePage.grid.api.getActiveWorkbook().getSheetByName("Data").getRange("H4").getFormula(),
+    );
+    expect(formula).toBe(FORECAST);
+  });
+});

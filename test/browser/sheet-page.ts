@@ -1,0 +1,103 @@
+import type { Browser, Page } from "playwright-core";
+import { launchBrowser } from "./launch";
+import { serveDist } from "./serve";
+
+type RawCell = number | string | boolean | null | { readonly type: "Error"; readonly basicValue: string };
+
+/** What the page offers to whoever drives it. */
+declare const comovePage: {
+  host: {
+    readBlock(address: string): Promise<RawCell[][]>;
+    writeFormulas(address: string, formulas: string[][]): Promise<void>;
+    writeLabels(address: string, labels: string[][]): Promise<void>;
+  };
+  grid: { api: any };
+};
+
+/** The built page in a headless browser, driven as a user does: select, type, read. */
+export class SheetPage {
+  /** Console errors, page errors, requests to other hosts and refused content, as they happen. */
+  readonly complaints: string[] = [];
+
+  private constructor(
+    readonly page: Page,
+    private readonly browser: Browser,
+    private readonly site: { url: string; close(): Promise<void> },
+  ) {}
+
+  static async open(width = 1500): Promise<SheetPage> {
+    const site = await serveDist();
+    const browser = await launchBrowser();
+    const page = await browser.newPage({ viewport: { width, height: 820 } });
+    const opened = new SheetPage(page, browser, site);
+    opened.listen();
+    await page.goto(site.url);
+    await page.waitForFunction(() => "comovePage" in globalThis);
+    await opened.until("Data!H4:K16", (cells) => typeof cells[12][3] === "number");
+    return opened;
+  }
+
+  private listen(): void {
+    this.page.on("console", (message) => {
+      if (message.type() === "error") this.complaints.push(message.text());
+    });
+    this.page.on("pageerror", (error) => this.complaints.push(error.message));
+    this.page.on("request", (request) => {
+      const url = request.url();
+      if (!url.startsWith(this.site.url) && !/^(data|blob):/.test(url)) this.complaints.push(`foreign request: ${url}`);
+    });
+  }
+
+  read(address: string): Promise<RawCell[][]> {
+    return this.page.evaluate((a) => comovePage.host.readBlock(a), address);
+  }
+
+  /** Reads a block until it is as wanted; fails with what stands there when it never is. */
+  async until(address: string, wanted: (cells: RawCell[][]) => boolean, seconds = 20): Promise<RawCell[][]> {
+    const end = Date.now() + 1000 * seconds;
+    for (;;) {
+      const cells = await this.read(address);
+      if (wanted(cells)) return cells;
+      if (Date.now() > end) throw new Error(`${address} never came right; it holds ${JSON.stringify(cells).slice(0, 600)}`);
+      await this.page.waitForTimeout(25);
+    }
+  }
+
+  /** Selects cells of a sheet, as a click and a drag would. */
+  async select(sheet: string, a1: string): Promise<void> {
+    await this.page.evaluate(
+      ([name, cells]) => {
+        const book = comovePage.grid.api.getActiveWorkbook();
+        const target = book.getSheetByName(name);
+        book.setActiveSheet(target);
+        target.getRange(cells).activate();
+      },
+      [sheet, a1],
+    );
+    await this.page.waitForTimeout(150);
+  }
+
+  /** Selects a cell and types into it, key by key. */
+  async type(sheet: string, a1: string, text: string, { enter = true } = {}): Promise<void> {
+    await this.select(sheet, a1);
+    await this.page.keyboard.type(text);
+    if (enter) await this.page.keyboard.press("Enter");
+  }
+
+  async clear(sheet: string, a1: string): Promise<void> {
+    await this.select(sheet, a1);
+    await this.page.keyboard.press("Delete");
+  }
+
+  shot(name: string): Promise<Buffer> {
+    return this.page.screenshot({ path: `test/browser/shots/${name}.png` });
+  }
+
+  async close(): Promise<void> {
+    await this.browser.close();
+    await this.site.close();
+  }
+}
+
+export const isError = (cell: RawCell, code: string): boolean =>
+  typeof cell === "object" && cell !== null && cell.basicValue === code;
