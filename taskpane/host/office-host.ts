@@ -1,14 +1,12 @@
 import type { Contents, SheetHost } from "./sheet-host";
 
-/** A batch may come while the user edits a cell; without this the program refuses it. */
-const WAIT_FOR_EDIT = { delayForCellEdit: true };
-
 /** The pane's view of Excel. */
 export class OfficeHost implements SheetHost {
   readonly canChart = true;
+  #inOneStep = false;
 
   selectedAddress(): Promise<string> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       const range = context.workbook.getSelectedRange();
       range.load("address");
       await context.sync();
@@ -17,7 +15,7 @@ export class OfficeHost implements SheetHost {
   }
 
   readBlock(address: string): Promise<unknown[][]> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       // a whole column is a million rows: only what is used of it is read
       const range = rangeAt(context, address);
       const used = range.getUsedRangeOrNullObject(true);
@@ -38,14 +36,14 @@ export class OfficeHost implements SheetHost {
   }
 
   writeFormulas(address: string, formulas: string[][]): Promise<void> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       rangeAt(context, address).formulas = formulas;
       await context.sync();
     });
   }
 
   writeLabels(address: string, labels: string[][]): Promise<void> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       // the apostrophe is not part of the value: it says that the rest is text
       rangeAt(context, address).values = labels.map((row) =>
         row.map((label) => (label === "" ? "" : `'${label}`)),
@@ -55,7 +53,7 @@ export class OfficeHost implements SheetHost {
   }
 
   addSheet(name: string): Promise<string> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       const { worksheets } = context.workbook;
       worksheets.load("items/name");
       await context.sync();
@@ -69,14 +67,14 @@ export class OfficeHost implements SheetHost {
   }
 
   nameRange(name: string, address: string): Promise<void> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       context.workbook.names.add(name, rangeAt(context, address));
       await context.sync();
     });
   }
 
   addChart({ address, title, at }: { address: string; title: string; at: string }): Promise<void> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       const corner = rangeAt(context, at);
       const chart = corner.worksheet.charts.add(
         Excel.ChartType.line,
@@ -90,7 +88,7 @@ export class OfficeHost implements SheetHost {
   }
 
   contents(address: string): Promise<Contents> {
-    return Excel.run(WAIT_FOR_EDIT, async (context) => {
+    return this.#run(async (context) => {
       const range = rangeAt(context, address);
       range.load(["values", "rowIndex", "columnIndex"]);
       await context.sync();
@@ -106,13 +104,19 @@ export class OfficeHost implements SheetHost {
     });
   }
 
-  oneUndoStep<T>(work: () => Promise<T>): Promise<T> {
-    return work();
+  async oneUndoStep<T>(work: () => Promise<T>): Promise<T> {
+    // older programs cannot join batches into one step; there each write is taken back by itself
+    this.#inOneStep = Office.context.requirements.isSetSupported("ExcelApi", "1.20");
+    try {
+      return await work();
+    } finally {
+      this.#inOneStep = false;
+    }
   }
 
   onSelectionChanged(listener: () => void): () => void {
     const handler = async (): Promise<void> => listener();
-    const added = Excel.run(WAIT_FOR_EDIT, async (context) => {
+    const added = this.#run(async (context) => {
       const result = context.workbook.onSelectionChanged.add(handler);
       await context.sync();
       return result;
@@ -124,6 +128,11 @@ export class OfficeHost implements SheetHost {
           await context.sync();
         }),
       );
+  }
+
+  #run<T>(batch: (context: Excel.RequestContext) => Promise<T>): Promise<T> {
+    // a batch may come while the user edits a cell; without the delay the program refuses it
+    return Excel.run({ delayForCellEdit: true, mergeUndoGroup: this.#inOneStep }, batch);
   }
 }
 
