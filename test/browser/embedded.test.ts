@@ -13,7 +13,12 @@ describe("the embedded sheet", () => {
   it("shows the demo forecast, 12 rows of 4 series under their names, filled by one formula", async () => {
     const block = await sheet.read("Data!H4:K16");
     expect(block[0]).toEqual(["landings", "ice", "electricity", "trips"]);
-    expect(block.slice(1).flat().every((v) => typeof v === "number" && Number.isFinite(v))).toBe(true);
+    expect(
+      block
+        .slice(1)
+        .flat()
+        .every((v) => typeof v === "number" && Number.isFinite(v)),
+    ).toBe(true);
     expect(await sheet.read("Data!L4:L17")).toEqual(Array.from({ length: 14 }, () => [null]));
     await sheet.shot("data");
   });
@@ -51,14 +56,17 @@ describe("the embedded sheet", () => {
     await sheet.type("Data", "U10", "in the way");
     await sheet.until("Data!T4", ([[v]]) => isError(v, "#SPILL!"));
     await sheet.clear("Data", "U10");
-    await sheet.until("Data!T4:W16", (cells) => cells[0][0] === "landings" && typeof cells[12][3] === "number");
+    await sheet.until(
+      "Data!T4:W16",
+      (cells) => cells[0][0] === "landings" && typeof cells[12][3] === "number",
+    );
   });
 
   it("keeps dependants of a spill that shrank from going stale", async () => {
     await sheet.type("Data", "AD4", "=COUNT(AF4:AF40)");
-    await sheet.type("Data", "AF4", "=COMOVE.STEPS(B4:B24,\"none\")");
+    await sheet.type("Data", "AF4", '=COMOVE.STEPS(B4:B24,"none")');
     await sheet.until("Data!AD4", ([[v]]) => v === 20);
-    await sheet.type("Data", "AF4", "=COMOVE.STEPS(B4:B9,\"none\")");
+    await sheet.type("Data", "AF4", '=COMOVE.STEPS(B4:B9,"none")');
     await sheet.until("Data!AD4", ([[v]]) => v === 5);
   });
 
@@ -68,7 +76,9 @@ describe("the embedded sheet", () => {
     await sheet.select("Data", "G40");
     const message = sheet.page.locator("#message");
     await message.waitFor({ state: "visible" });
-    expect(await message.textContent()).toBe("For horizon, 0 will not do. Give a whole number from 1 to 10,000.");
+    expect(await message.textContent()).toBe(
+      "For horizon, 0 will not do. Give a whole number from 1 to 10,000.",
+    );
     await sheet.shot("error");
     await sheet.select("Data", "G41");
     await message.waitFor({ state: "hidden" });
@@ -124,8 +134,12 @@ describe("the embedded sheet", () => {
   });
 
   it("holds the formula it promises", async () => {
-    const formula = await sheet.page.evaluate(
-      () => (globalThis as any).comovePage.grid.api.getActiveWorkbook().getSheetByName("Data").getRange("H4").getFormula(),
+    const formula = await sheet.page.evaluate(() =>
+      (globalThis as any).comovePage.grid.api
+        .getActiveWorkbook()
+        .getSheetByName("Data")
+        .getRange("H4")
+        .getFormula(),
     );
     expect(formula).toBe(FORECAST);
   });

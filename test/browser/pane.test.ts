@@ -34,7 +34,9 @@ describe("the pane beside the embedded sheet", () => {
     await sheet.select("Data", "B4:E160");
     const button = pane().getByRole("button", { name: "Write the forecast here" });
     await button.click();
-    await pane().getByText(/would be in the way, the first in G4/).waitFor();
+    await pane()
+      .getByText(/would be in the way, the first in G4/)
+      .waitFor();
     await pane().getByLabel("Put it at").fill("P40");
     await pane().getByLabel("Rows ahead").fill("6");
     await button.click();
@@ -50,7 +52,9 @@ describe("the pane beside the embedded sheet", () => {
     await sheet.page.setViewportSize({ width: window, height: 820 });
     const box = await sheet.page.getByRole("complementary", { name: "Comove" }).boundingBox();
     expect(Math.round(box!.width)).toBe(width);
-    const overflow = await sheet.page.getByRole("complementary", { name: "Comove" }).evaluate((aside) => aside.scrollWidth - aside.clientWidth);
+    const overflow = await sheet.page
+      .getByRole("complementary", { name: "Comove" })
+      .evaluate((aside) => aside.scrollWidth - aside.clientWidth);
     expect(overflow).toBe(0);
     await sheet.shot(`pane-${width}`);
   });

@@ -44,7 +44,8 @@ export class SheetPage {
     this.page.on("pageerror", (error) => this.complaints.push(error.message));
     this.page.on("request", (request) => {
       const url = request.url();
-      if (!url.startsWith(this.site.url) && !/^(data|blob):/.test(url)) this.complaints.push(`foreign request: ${url}`);
+      if (!url.startsWith(this.site.url) && !/^(data|blob):/.test(url))
+        this.complaints.push(`foreign request: ${url}`);
     });
   }
 
@@ -58,7 +59,8 @@ export class SheetPage {
     for (;;) {
       const cells = await this.read(address);
       if (wanted(cells)) return cells;
-      if (Date.now() > end) throw new Error(`${address} never came right; it holds ${JSON.stringify(cells).slice(0, 600)}`);
+      if (Date.now() > end)
+        throw new Error(`${address} never came right; it holds ${JSON.stringify(cells).slice(0, 600)}`);
       await this.page.waitForTimeout(25);
     }
   }
