@@ -101,6 +101,7 @@ export type IssueFacts =
       readonly need: number;
       readonly largest: number | null;
     }
+  | { readonly code: "too-heavy"; readonly rows: number; readonly coefficients: number }
   | { readonly code: "lags-beyond-rows"; readonly lag: number; readonly rows: number }
   | {
       readonly code: "step-domain";

@@ -45,7 +45,12 @@ const candidate = (shape: Shape, order: number): ModelSettings => ({
 export function compareOrders(sample: SteppedSample, shape: Shape, maxOrder: number): OrderRow[] {
   const series = sample.y[0].length;
   const drivers = sample.drivers[0]?.length ?? 0;
-  requireRows(candidate(shape, maxOrder), { rows: sample.y.length, series, drivers });
+  // coefficients grow with the order, so all orders together cost about a third of as many of the largest
+  requireRows(
+    candidate(shape, maxOrder),
+    { rows: sample.y.length, series, drivers },
+    Math.max(1, (maxOrder + 1) / 3),
+  );
   refuseExactSeries(sample.y, shape, sample.start);
   const rows = sample.y.length - maxOrder;
   const out: OrderRow[] = [];

@@ -1,6 +1,7 @@
 import { Issue } from "../issue";
 import { termCount } from "./terms";
 import { orderOf, type Calendar } from "./settings";
+import { requireWork } from "./work";
 
 /**
  * Rows that a fit needs: p are spent as lags, and each equation's residuals must outnumber its
@@ -33,9 +34,20 @@ export interface Extent {
   readonly drivers: number;
 }
 
-/** @throws Issue "too-few-rows" */
-export function requireRows(calendar: Calendar & { readonly lags: readonly number[] }, extent: Extent): void {
-  refuseBelow(rowsNeeded(calendar, extent.series, extent.drivers), calendar, orderOf(calendar), extent);
+/**
+ * Refuses a fit with too few rows, or one so wide and long that the page would stand still.
+ * @param fits how many fits of this size the call asks for
+ * @throws Issue "too-few-rows" | "too-heavy"
+ */
+export function requireRows(
+  calendar: Calendar & { readonly lags: readonly number[] },
+  extent: Extent,
+  fits = 1,
+): void {
+  const { rows, series, drivers } = extent;
+  const need = rowsNeeded(calendar, series, drivers);
+  refuseBelow(need, calendar, orderOf(calendar), extent);
+  requireWork({ rows, coefficients: need - orderOf(calendar) - series, series }, fits);
 }
 
 /**

@@ -152,6 +152,8 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     (largest === null
       ? "Use more rows, or fewer series, terms or drivers."
       : `The largest order it can carry is ${grouped(largest)}. Use fewer lags or more rows.`),
+  "too-heavy": ({ rows, coefficients }) =>
+    `This fit would hold up the sheet: ${plural(rows, "row")} with ${plural(coefficients, "coefficient")} per equation. Use waves for a long season, fewer lags, or fewer rows.`,
   "lags-beyond-rows": ({ lag, rows }) =>
     `Lag ${grouped(lag)} reaches beyond the ${plural(rows, "row")} of this range. Use lags up to ${grouped(rows - 1)}.`,
   "step-domain": ({ step, series, row, value }, wording) =>
