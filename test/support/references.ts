@@ -43,6 +43,11 @@ function dataSet(name: string): { levels: Matrix; steps: StepPlan } {
       const levels = readCsv("e1_west_german_inv_inc_cons_1960Q1_1982Q4.csv", ["invest", "income", "cons"]);
       return { levels: levels.slice(0, 76), steps: [1, 2, 3].map(() => [log, diff]) };
     }
+    case "danish":
+      return {
+        levels: readCsv("danish_johansen_juselius_1990.csv", ["lrm", "lry", "ibo", "ide"]),
+        steps: [[], [], [], []],
+      };
     case "macro": {
       const levels = readCsv("macrodata.csv", ["realgdp", "realcons", "realinv"]);
       return { levels, steps: [1, 2, 3].map(() => [log, diff]) };

@@ -24,6 +24,7 @@ def read(file, columns):
 
 german = np.diff(np.log(read("e1_west_german_inv_inc_cons_1960Q1_1982Q4.csv", ["invest", "income", "cons"])[:76]), axis=0)
 macro = np.diff(np.log(read("macrodata.csv", ["realgdp", "realcons", "realinv"])), axis=0)
+danish = read("danish_johansen_juselius_1990.csv", ["lrm", "lry", "ibo", "ide"])
 bjsales = np.diff(read("BJsales.csv", ["lead", "sales"]), axis=0)
 
 
@@ -84,6 +85,7 @@ print(
                 case("macro order 2 with trend", macro, 2, "ct", 4),
                 case("macro order 1 with squared trend", macro, 1, "ctt", 4),
                 case("german order 2 without terms", german, 2, "n", 4),
+                case("danish order 2", danish, 2, "c", 3),
                 case("bjsales order 5", bjsales, 5, "c", 8),
                 case("macro order 2 with a driver", macro, 2, "c", 4, outside),
             ],
