@@ -13,8 +13,12 @@ export interface Reading {
   readonly problems: readonly string[];
 }
 
+const NOTHING: Reading = { names: [], hasHeader: false, rows: 0, gaps: 0, problems: [] };
+
 /** Reads raw cells the way every function will, but goes on after the first problem. */
 export function readSelection(cells: readonly (readonly unknown[])[]): Reading {
+  // one cell is where the cursor happens to stand, not a block that somebody means
+  if (cells.length <= 1 && (cells[0]?.length ?? 0) <= 1) return NOTHING;
   try {
     const { block, problems } = surveySeries(cells);
     return {
@@ -26,6 +30,6 @@ export function readSelection(cells: readonly (readonly unknown[])[]): Reading {
     };
   } catch (thrown) {
     if (!(thrown instanceof Issue)) throw thrown;
-    return { names: [], hasHeader: false, rows: 0, gaps: 0, problems: [wordIssue(thrown.facts)] };
+    return { ...NOTHING, problems: [wordIssue(thrown.facts)] };
   }
 }

@@ -52,6 +52,12 @@ describe("the pane's reading of a block", () => {
   });
 });
 
+it("a single cell is no block, whatever it holds", () => {
+  for (const cell of [5, "word", null, { type: "Error", basicValue: "#VALUE!" }]) {
+    expect(readSelection([[cell]])).toMatchObject({ rows: 0, problems: [] });
+  }
+});
+
 describe("where the forecast goes", () => {
   const state: PaneState = { ...initialState, address: "Data!B4:C7", reading: readSelection(clean) };
 

@@ -123,7 +123,12 @@ function forecastSheet() {
       "A forecast is not a guarantee. Where a decision can hurt someone (dosing, running a grid or a plant,",
       "safety stock of medicines), local codes and the licensed practitioner decide, not this sheet.",
     ])
-    .widths({ 0: 96 })
+    .widths({
+      0: 96,
+      ...Object.fromEntries(
+        Array.from({ length: 12 }, (_, k) => [k + 1, k < 3 || (k > 5 && k < 9) ? 122 : 92]),
+      ),
+    })
     .build(4);
 }
 

@@ -5,7 +5,7 @@ export const paneWords = {
   station: "The selected block",
   nothing: "Select a block of series: one column each, oldest row first, names above if there are any.",
   seriesFound: (names: readonly string[]) => `${names.length} series: ${names.join(", ")}`,
-  rowsFound: (rows: number) => `${rows.toLocaleString("en-US")} rows`,
+  rowsFound: (rows: number) => (rows === 1 ? "1 row" : `${rows.toLocaleString("en-US")} rows`),
   noHeader:
     "The first row holds no names, so the series are called y1, y2 …. Include the header row to see their names in results.",
   fewRows: "Fewer than 50 rows: expect wide bands, and read every lead with care.",
