@@ -5,6 +5,7 @@ export type Allowed =
   | { readonly kind: "one-of"; readonly values: readonly string[] }
   | { readonly kind: "whole"; readonly from: number; readonly to: number | null }
   | { readonly kind: "number"; readonly above: number; readonly below: number | null }
+  | { readonly kind: "number-from"; readonly from: number }
   | { readonly kind: "list"; readonly of: "lags" | "steps" | "test lags" };
 
 /** A weighted column of an exact relation. */
@@ -74,6 +75,7 @@ export type IssueFacts =
   | { readonly code: "bad-option"; readonly key: string; readonly found: string; readonly allowed: Allowed }
   | { readonly code: "option-needs"; readonly key: string; readonly needs: string }
   | { readonly code: "fit-without-drivers"; readonly fit: string }
+  | { readonly code: "fit-all-lags"; readonly fit: string }
   | { readonly code: "options-clash"; readonly key: string; readonly other: string }
   | {
       readonly code: "option-against-block";

@@ -1,6 +1,15 @@
 import { Issue } from "../core/issue";
 import type { ModelPlan } from "../core/var/sample";
-import { allLags, orderOf, type FitMethod, type ModelSettings, type Shape } from "../core/var/settings";
+import {
+  allLags,
+  DEFAULT_FADE,
+  DEFAULT_PULL,
+  isSubset,
+  orderOf,
+  type FitMethod,
+  type ModelSettings,
+  type Shape,
+} from "../core/var/settings";
 import { requireOrder, type Extent } from "../core/var/rows-needed";
 import { planLoss, type StepPlan } from "../core/prepare/steps";
 import { describeCell, toCells, type Cell } from "./cell";
@@ -19,6 +28,10 @@ export const SETTING_KEYS = [
   "waves",
   "uselags",
   "steps",
+  "pull",
+  "fade",
+  "pull",
+  "fade",
 ] as const satisfies readonly OptionKey[];
 /** The keys that choose an order. */
 export const CHOICE_KEYS = ["criterion", "maxorder"] as const satisfies readonly OptionKey[];
@@ -97,6 +110,9 @@ export function planModel(
   if (options.uselags && options.uselags.at(-1) !== order) {
     throw new Issue({ code: "options-clash", key: "uselags", other: "order" });
   }
+  if (options.uselags && isSubset(options.uselags) && shape.fit === "nuttall-strand") {
+    throw new Issue({ code: "fit-all-lags", fit: shape.fit });
+  }
   if (options.uselags) return { kind: "fit", settings: { ...shape, lags: options.uselags } };
   requireOrder(shape, order, extentOf(shape, series, drivers));
   return { kind: "fit", settings: { ...shape, lags: allLags(order) } };
@@ -117,6 +133,11 @@ export function readShape(options: Options, series: number): Shape {
       allowed: { kind: "whole", from: 1, to },
     });
   }
+  for (const key of ["pull", "fade"] as const) {
+    if (options[key] !== undefined && options.fit !== "shrinkage") {
+      throw new Issue({ code: "option-needs", key, needs: "fit=shrinkage" });
+    }
+  }
   return {
     fit: options.fit ?? "least-squares",
     terms: options.terms ?? "constant",
@@ -125,8 +146,8 @@ export function readShape(options: Options, series: number): Shape {
     steps: readPlan(options.steps ?? [[]], series),
     longRun: null,
     movingAverage: 0,
-    pull: 0.2,
-    fade: 1,
+    pull: options.pull ?? DEFAULT_PULL,
+    fade: options.fade ?? DEFAULT_FADE,
   };
 }
 
@@ -170,6 +191,8 @@ function refuseContradiction(options: Options, settings: ModelSettings, series: 
     waves: String(settings.waves ?? "none"),
     uselags: settings.lags.join(" "),
     steps: formatSteps(settings.steps),
+    pull: String(settings.pull),
+    fade: String(settings.fade),
   };
   for (const key of SETTING_KEYS) {
     if (options[key] === undefined) continue;

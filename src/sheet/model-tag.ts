@@ -1,7 +1,14 @@
 import { Issue } from "../core/issue";
 import type { Matrix } from "../core/matrix";
 import type { VarModel } from "../core/var/model";
-import { allLags, isSubset, orderOf, type ModelSettings } from "../core/var/settings";
+import {
+  allLags,
+  DEFAULT_FADE,
+  DEFAULT_PULL,
+  isSubset,
+  orderOf,
+  type ModelSettings,
+} from "../core/var/settings";
 import { OPTIONS } from "./option-specs";
 import { formatSteps, spreadSteps } from "./steps-text";
 
@@ -28,6 +35,7 @@ export function settingsText(settings: ModelSettings): string {
   if (settings.waves !== null) parts.push(`waves=${settings.waves}`);
   if (isSubset(settings.lags)) parts.push(`uselags=${settings.lags.join(" ")}`);
   if (settings.steps.some((list) => list.length > 0)) parts.push(`steps=${formatSteps(settings.steps)}`);
+  if (settings.fit === "shrinkage") parts.push(`pull=${settings.pull}`, `fade=${settings.fade}`);
   return parts.join("; ");
 }
 
@@ -68,12 +76,14 @@ export function parseTag(text: string): Tag {
     ? (read("uselags", option("uselags")) as readonly number[])
     : allLags(order);
   if ((lags.at(-1) ?? 0) !== order) throw bad("uselags");
+  const fit = read("fit", option("fit")) as ModelSettings["fit"];
+  if (fit === "nuttall-strand" && isSubset(lags)) throw bad("uselags");
   const cycle = given.has("cycle") ? read("cycle", option("cycle")) : null;
   const waves = given.has("waves") ? read("waves", option("waves")) : null;
   if (waves !== null && (cycle === null || waves > cycle / 2)) throw bad("waves");
   return {
     settings: {
-      fit: read("fit", option("fit")) as ModelSettings["fit"],
+      fit,
       terms: read("terms", option("terms")) as ModelSettings["terms"],
       cycle,
       waves,
@@ -87,8 +97,8 @@ export function parseTag(text: string): Tag {
       ),
       longRun: null,
       movingAverage: 0,
-      pull: 0.2,
-      fade: 1,
+      pull: read("pull", OPTIONS.pull.parse, DEFAULT_PULL),
+      fade: read("fade", OPTIONS.fade.parse, DEFAULT_FADE),
       lags,
     },
     series,

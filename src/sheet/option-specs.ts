@@ -15,6 +15,8 @@ export interface OptionValues {
   readonly uselags: readonly number[] | null;
   /** As written: one list, or one per series. */
   readonly steps: StepPlan;
+  readonly pull: number;
+  readonly fade: number;
   readonly criterion: Criterion;
   readonly maxorder: number;
   readonly coverage: number;
@@ -63,6 +65,14 @@ const between = (above: number, below: number | null): OptionSpec<number> => ({
   },
 });
 
+const from = (least: number): OptionSpec<number> => ({
+  allowed: { kind: "number-from", from: least },
+  parse: (text) => {
+    const value = parseNumber(text);
+    return value !== undefined && value >= least ? value : undefined;
+  },
+});
+
 const orNone = <T>(spec: OptionSpec<T>, word = "none"): OptionSpec<T | null> => ({
   allowed: spec.allowed,
   parse: (text) => (text.toLowerCase() === word ? null : spec.parse(text)),
@@ -84,13 +94,15 @@ const stepLists: OptionSpec<StepPlan> = {
 
 /** Every option there is. Which of them apply is stated at each call. */
 export const OPTIONS: { readonly [K in OptionKey]: OptionSpec<OptionValues[K]> } = {
-  fit: choice("least-squares", "yule-walker"),
+  fit: choice("least-squares", "yule-walker", "nuttall-strand", "shrinkage"),
   terms: choice("constant", "none", "trend", "quadratic"),
   cycle: orNone(whole(2, 100_000)),
   waves: orNone(whole(1)),
   start: whole(1, 10_000_000),
   uselags: orNone(lagList, "all"),
   steps: stepLists,
+  pull: between(0, null),
+  fade: from(0),
   criterion: choice("aicc", "aic", "bic", "hq"),
   maxorder: whole(0, 10_000),
   coverage: between(0, 1),

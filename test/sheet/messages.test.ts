@@ -103,6 +103,8 @@ const examples: readonly IssueFacts[] = [
   },
   { code: "exact-combination", columns: [{ column: { kind: "driver", driver: 0 }, weight: 1 }] },
   { code: "predicted-exactly", order: 1 },
+  { code: "fit-all-lags", fit: "nuttall-strand" },
+  { code: "bad-option", key: "fade", found: "text '-1'", allowed: { kind: "number-from", from: 0 } },
   { code: "too-heavy", rows: 20_000, coefficients: 506 },
   { code: "singular-system" },
   { code: "unstable", modulus: 1.0213 },

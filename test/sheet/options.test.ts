@@ -72,7 +72,7 @@ describe("options", () => {
 
   it("every option says what it allows, and refuses nonsense", () => {
     for (const key of every) {
-      expect(OPTIONS[key].allowed.kind).toMatch(/^(one-of|whole|number|list)$/);
+      expect(OPTIONS[key].allowed.kind).toMatch(/^(one-of|whole|number|number-from|list)$/);
       for (const text of ["nonsense", "-7", "1e999", "=", "{}"])
         expect(OPTIONS[key].parse(text)).toBeUndefined();
     }

@@ -22,7 +22,8 @@ MODEL takes its settings and estimates the numbers anew.</p>
 <p>One text such as <code>"terms=trend; cycle=12"</code>, or two columns of keys and values.</p>
 <table>
 <tr><th>key</th><th>values, the default first</th><th>meaning</th></tr>
-<tr><td>fit</td><td>least-squares, yule-walker</td><td>how the coefficients are estimated</td></tr>
+<tr><td>fit</td><td>least-squares, yule-walker, nuttall-strand, shrinkage</td><td>how the coefficients are estimated</td></tr>
+<tr><td>pull, fade</td><td>0.2, 1</td><td>shrinkage: how strongly lags are pulled to zero (the own first lag to one), and how that grows with the lag</td></tr>
 <tr><td>terms</td><td>constant, none, trend, quadratic</td><td>what every equation holds beside the lags</td></tr>
 <tr><td>cycle</td><td>none, or rows in a season</td><td>a season by indicators, or by waves</td></tr>
 <tr><td>waves</td><td>none, or 1 to half a cycle</td><td>pairs of sine and cosine that carry the season</td></tr>

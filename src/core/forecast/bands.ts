@@ -1,13 +1,10 @@
 import { normalQuantile } from "../distributions";
 import type { Matrix } from "../matrix";
 import { integratePath } from "../prepare/steps";
-import { designOf } from "../var/design";
+import { coefficientRoots } from "../var/coefficient-covariance";
 import { fitModel } from "../var/fit";
-import { leastSquares } from "../var/least-squares";
 import type { VarModel } from "../var/model";
-import { requireRows } from "../var/rows-needed";
 import type { ModelRequest } from "../var/sample";
-import { orderOf } from "../var/settings";
 import { stepSample, type SteppedSample } from "../var/stepped";
 import { requireFinite } from "./finite";
 import { toMean, toMedian, type AheadRequest } from "./ahead";
@@ -67,8 +64,6 @@ function withCoefficients(
   known: Matrix,
   regressors: Matrix,
 ): Matrix {
-  requireRows(model.settings, { rows: stepped.y.length, series: model.series, drivers: model.drivers });
-  const { inverseRoot } = leastSquares(designOf(stepped, model.settings, orderOf(model.settings)));
-  const extra = coefficientVariances(model, regressors, inverseRoot);
+  const extra = coefficientVariances(model, regressors, coefficientRoots(model, stepped));
   return known.map((row, j) => row.map((v, k) => Math.hypot(v, Math.sqrt(extra[j][k]))));
 }

@@ -2,6 +2,7 @@ import { multiply } from "../linalg";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
 import { innovationRoot } from "../var/innovation-root";
 import { lagMatrices } from "../var/lag-matrices";
+import type { CoefficientRoots } from "../var/coefficient-covariance";
 import type { VarModel } from "../var/model";
 import { impulseMatrices, integrateEffects } from "./impulse";
 
@@ -20,17 +21,20 @@ export function pathDeviations(model: VarModel, horizon: number): Matrix {
 }
 
 /**
- * Variance that the coefficients' sampling error adds, D·Cov(β̂)·Dᵀ with Cov(β̂) = (ZᵀZ)⁻¹ ⊗ Σ.
- * The forecast's derivative follows the recursion of the forecast itself, so with (ZᵀZ)⁻¹ = W·Wᵀ and
- * v(h) = Wᵀz(h) each column a of W gives E(h) = v_a(h)·Σ^½ + Σ_l Φ(l)E(h − l), and the variance is the sum of
+ * Variance that the coefficients' sampling error adds, D·Cov(β̂)·Dᵀ with Cov(β̂) = W·Wᵀ ⊗ R·Rᵀ,
+ * W·Wᵀ = (ZᵀZ)⁻¹ and R·Rᵀ = Σ for least squares.
+ * The forecast's derivative follows the recursion of the forecast itself, so with
+ * v(h) = Wᵀz(h) each column a of W gives E(h) = v_a(h)·R + Σ_l Φ(l)E(h − l), and the variance is the sum of
  * squares over all of them. At h = 1 it is zᵀ(ZᵀZ)⁻¹z·Σ.
  * @param regressors  h×q, the rows that the forecast was made of
- * @param inverseRoot W, q×q
  * @returns           h×K variances
  * Source: Lütkepohl (2005), 3.5; here given the actual last rows and in finite-sample form
  */
-export function coefficientVariances(model: VarModel, regressors: Matrix, inverseRoot: Matrix): Matrix {
-  const root = innovationRoot(model);
+export function coefficientVariances(
+  model: VarModel,
+  regressors: Matrix,
+  { inverseRoot, root }: CoefficientRoots,
+): Matrix {
   const phi = lagMatrices(model);
   const weights = multiply(regressors, inverseRoot);
   const variances = zeros(regressors.length, model.series);

@@ -10,7 +10,9 @@ import { requireRows } from "./rows-needed";
 import type { ModelRequest, Sample } from "./sample";
 import { allLags, orderOf, type ModelSettings } from "./settings";
 import { stepSample, type SteppedSample } from "./stepped";
-import { carryTerms, removeTerms, yuleWalker } from "./yule-walker";
+import { carryTerms, removeTerms, yuleWalker, type MomentFit } from "./yule-walker";
+import { nuttallStrand } from "./nuttall-strand";
+import { dataResiduals, shrinkageDesign } from "./shrinkage";
 
 /** The numbers that an estimator returns. */
 interface Estimate {
@@ -61,7 +63,16 @@ function estimate(stepped: SteppedSample, settings: ModelSettings): Estimate {
     case "least-squares":
       return byLeastSquares(stepped, settings, rows - orderOf(settings) - q);
     case "yule-walker":
-      return byYuleWalker(stepped, settings, rows / (rows - q));
+      return byMoments(stepped, settings, (rest) => yuleWalker(rest, settings), rows / (rows - q));
+    case "nuttall-strand":
+      return byMoments(
+        stepped,
+        settings,
+        (rest) => nuttallStrand(rest, orderOf(settings)),
+        rows / (rows - q),
+      );
+    case "shrinkage":
+      return byShrinkage(stepped, settings, rows - orderOf(settings) - q);
     default:
       throw new Error(`no estimator for ${settings.fit}`);
   }
@@ -73,10 +84,24 @@ function byLeastSquares(stepped: SteppedSample, settings: ModelSettings, divisor
   return { coefficients, noiseCovariance: residualCovariance(residuals, divisor) };
 }
 
+/** Innovation covariance UᵀU/(T − q) over the rows of data. */
+function byShrinkage(stepped: SteppedSample, settings: ModelSettings, divisor: number): Estimate {
+  const { coefficients, residuals } = leastSquares(shrinkageDesign(stepped, settings).design);
+  return {
+    coefficients,
+    noiseCovariance: residualCovariance(dataResiduals(residuals, stepped, settings), divisor),
+  };
+}
+
 /** Innovation covariance of the recursion times n/(n − q). */
-function byYuleWalker(stepped: SteppedSample, settings: ModelSettings, factor: number): Estimate {
+function byMoments(
+  stepped: SteppedSample,
+  settings: ModelSettings,
+  solve: (rest: Matrix) => MomentFit,
+  factor: number,
+): Estimate {
   const { rest, taken } = removeTerms(stepped, settings);
-  const { lagMatrices, innovation } = yuleWalker(rest, settings);
+  const { lagMatrices, innovation } = solve(rest);
   const terms = carryTerms(settings, taken, lagMatrices);
   return {
     coefficients: [...terms, ...lagMatrices.flatMap((phi) => phi[0].map((_, k) => phi.map((row) => row[k])))],

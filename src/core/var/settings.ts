@@ -37,6 +37,10 @@ export interface ModelSettings extends Shape {
   readonly lags: readonly number[];
 }
 
+/** Shrinkage when the user names none. */
+export const DEFAULT_PULL = 0.2;
+export const DEFAULT_FADE = 1;
+
 export const orderOf = (settings: { readonly lags: readonly number[] }): number => settings.lags.at(-1) ?? 0;
 
 export const allLags = (order: number): number[] => Array.from({ length: order }, (_, j) => j + 1);

@@ -39,6 +39,8 @@ export function allowedWords(allowed: Allowed): string {
       return allowed.below === null
         ? `a number above ${allowed.above}`
         : `a number between ${allowed.above} and ${allowed.below}, ends left out`;
+    case "number-from":
+      return `a number from ${allowed.from}`;
     case "list":
       return allowed.of === "steps"
         ? "log or sqrt (only first), diff, diff 12 …, separated by commas, a bar between series"
@@ -114,6 +116,8 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `For the option ${key}, ${found} will not do. Give ${allowedWords(allowed)}.`,
   "option-needs": ({ key, needs }) =>
     `The option ${key} needs ${needs} beside it. Add ${needs}, or leave ${key} out.`,
+  "fit-all-lags": ({ fit }) =>
+    `The fit ${fit} uses all lags up to the order. Leave uselags out, or choose least-squares or yule-walker.`,
   "fit-without-drivers": ({ fit }) =>
     `The fit ${fit} takes no drivers. Leave the drivers out, or use fit=least-squares.`,
   "options-clash": ({ key, other }) =>
