@@ -119,6 +119,7 @@ export type IssueFacts =
   | { readonly code: "singular-system" }
   | { readonly code: "unstable"; readonly modulus: number }
   | { readonly code: "no-lags" }
+  | { readonly code: "needs-two-series" }
   | { readonly code: "too-large" }
   | { readonly code: "too-many-cells"; readonly cells: number; readonly limit: number };
 

@@ -4,7 +4,12 @@ import { requireFinite } from "./forecast/finite";
 import type { Matrix } from "./matrix";
 import { lagCorrelations, lagCovariances, type Divisor } from "./moments/lag-covariance";
 import { applySteps, undoSteps, type StepPlan } from "./prepare/steps";
-import { fitModel } from "./var/fit";
+import { fitModel, settingsOf } from "./var/fit";
+import { estimates } from "./var/estimates";
+import { fittedLevels, residualRows } from "./var/one-step-levels";
+import { grangerPValues, holm } from "./diagnostics/granger";
+import { partialLags } from "./moments/partial-lag";
+import { impliedCovariances } from "./moments/implied-covariance";
 import type { VarModel } from "./var/model";
 import { compareOrders } from "./var/order";
 import { rootsOf } from "./var/roots";
@@ -47,6 +52,23 @@ export const tasks = {
   order: ({ sample, shape, maxOrder }: OrderRequest) =>
     compareOrders(stepSample(sample, shape.steps), shape, maxOrder),
   fit: (request: ModelRequest) => fitModel(request),
+  fitted: ({ sample, plan }: ModelRequest, run: Runner) => fittedLevels(run.fit({ sample, plan }), sample),
+  residuals: ({ sample, plan }: ModelRequest, run: Runner) => residualRows(run.fit({ sample, plan }), sample),
+  estimates: ({ sample, plan, coverage }: ModelRequest & { readonly coverage: number }, run: Runner) =>
+    estimates(run.fit({ sample, plan }), sample, coverage),
+  granger: ({
+    sample,
+    plan,
+    spare,
+    adjust,
+  }: ModelRequest & { readonly spare: number; readonly adjust: boolean }) => {
+    const p = grangerPValues(sample, settingsOf(sample, plan), spare);
+    return adjust ? holm(p) : p;
+  },
+  partialLag: ({ series, lags }: { readonly series: Matrix; readonly lags: number }) =>
+    partialLags(series, lags),
+  impliedCovariance: ({ model, lags }: { readonly model: VarModel; readonly lags: number }) =>
+    impliedCovariances(model, lags),
   roots: ({ model }: { readonly model: VarModel }) => rootsOf(model),
   ahead: (request: AheadRequest, run: Runner) => forecastAhead(request, run.fit),
   bands: (request: BandsRequest, run: Runner) => forecastBands(request, run.fit),

@@ -1,6 +1,8 @@
 import { answer } from "./answer";
 import { order } from "../sheet/calls/order";
 import { model as modelCall } from "../sheet/calls/model";
+import { estimates } from "../sheet/calls/estimates";
+import { fitted, residuals } from "../sheet/calls/one-step";
 import { roots } from "../sheet/calls/roots";
 
 /**
@@ -40,4 +42,46 @@ export function MODEL(series: any[][], model?: any[][], options?: any[][], drive
  */
 export function ROOTS(model: any[][]): any[][] {
   return answer(roots, { model });
+}
+
+/**
+ * Every coefficient of the model with its standard error, limits and p-value, equation by equation.
+ * @customfunction ESTIMATES
+ * @helpurl https://localhost:3000/help/index.html#ESTIMATES
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose settings to use.
+ * @param [options] Options as "key=value; key=value" or as two columns: coverage, fit, terms, cycle, waves, steps and more.
+ * @param [drivers] Outside series, one per column, beside the series.
+ * @returns {any[][]} One row per coefficient.
+ */
+export function ESTIMATES(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
+  return answer(estimates, { series, model, options, drivers });
+}
+
+/**
+ * What the model forecasts one row ahead for every row of the series, in original units.
+ * @customfunction FITTED
+ * @helpurl https://localhost:3000/help/index.html#FITTED
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
+ * @param [options] Options as "key=value; key=value" or as two columns: fit, terms, cycle, waves, steps and more.
+ * @param [drivers] Outside series, one per column, beside the series.
+ * @returns {any[][]} One row per row of the series; the first rows are blank.
+ */
+export function FITTED(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
+  return answer(fitted, { series, model, options, drivers });
+}
+
+/**
+ * What the model leaves over in every row, on the scale of its steps.
+ * @customfunction RESIDUALS
+ * @helpurl https://localhost:3000/help/index.html#RESIDUALS
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
+ * @param [options] Options as "key=value; key=value" or as two columns: fit, terms, cycle, waves, steps and more.
+ * @param [drivers] Outside series, one per column, beside the series.
+ * @returns {any[][]} One row per row of the series; the first rows are blank.
+ */
+export function RESIDUALS(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
+  return answer(residuals, { series, model, options, drivers });
 }

@@ -1,5 +1,7 @@
 import { answer } from "./answer";
 import { lagcov } from "../sheet/calls/lagcov";
+import { impliedcov } from "../sheet/calls/impliedcov";
+import { partiallag } from "../sheet/calls/partiallag";
 import { lagcorr } from "../sheet/calls/lagcorr";
 
 /**
@@ -26,4 +28,29 @@ export function LAGCOV(series: any[][], lags: any[][], options?: any[][]): any[]
  */
 export function LAGCORR(series: any[][], lags: any[][], options?: any[][]): any[][] {
   return answer(lagcorr, { series, lags, options });
+}
+
+/**
+ * What each further lag adds: the last coefficient matrix of the fit of each order, with a test that it is zero.
+ * @customfunction PARTIALLAG
+ * @helpurl https://localhost:3000/help/index.html#PARTIALLAG
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param lags How many lags, from 1.
+ * @param [options] Options as "key=value; key=value" or as two columns: labels.
+ * @returns {any[][]} One matrix per lag, stacked downwards.
+ */
+export function PARTIALLAG(series: any[][], lags: any, options?: any[][]): any[][] {
+  return answer(partiallag, { series, lags, options });
+}
+
+/**
+ * Lagged covariance matrices that the numbers of a model block imply.
+ * @customfunction IMPLIEDCOV
+ * @helpurl https://localhost:3000/help/index.html#IMPLIEDCOV
+ * @param model A model block, as MODEL lays it out.
+ * @param lags The largest lag, from 0.
+ * @returns {any[][]} One matrix per lag, stacked downwards.
+ */
+export function IMPLIEDCOV(model: any[][], lags: any): any[][] {
+  return answer(impliedcov, { model, lags });
 }

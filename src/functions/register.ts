@@ -1,3 +1,4 @@
+import * as check from "./check";
 import * as fit from "./fit";
 import * as look from "./look";
 import * as prepare from "./prepare";
@@ -8,6 +9,7 @@ export const functions: Readonly<Record<string, (...args: never[]) => unknown>> 
   ...look,
   ...prepare,
   ...fit,
+  ...check,
   ...use,
 };
 

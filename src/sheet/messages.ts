@@ -22,6 +22,7 @@ const NOT_AVAILABLE: ReadonlySet<IssueCode> = new Set<IssueCode>([
   "covariance-not-positive",
   "unstable",
   "no-lags",
+  "needs-two-series",
   "too-large",
 ]);
 

@@ -23,6 +23,8 @@ export interface OptionValues {
   readonly bands: "fitted" | "known";
   readonly joint: "no" | "yes";
   readonly point: Point;
+  readonly adjust: "no" | "yes";
+  readonly spare: number;
   readonly divisor: Divisor;
   readonly labels: "auto" | "yes" | "no";
 }
@@ -109,6 +111,8 @@ export const OPTIONS: { readonly [K in OptionKey]: OptionSpec<OptionValues[K]> }
   bands: choice("fitted", "known"),
   joint: choice("no", "yes"),
   point: choice("median", "mean"),
+  adjust: choice("no", "yes"),
+  spare: whole(0, 1000),
   divisor: choice("n", "n-k"),
   labels: choice("auto", "yes", "no"),
 };

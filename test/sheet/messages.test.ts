@@ -109,6 +109,7 @@ const examples: readonly IssueFacts[] = [
   { code: "singular-system" },
   { code: "unstable", modulus: 1.0213 },
   { code: "no-lags" },
+  { code: "needs-two-series" },
   { code: "too-large" },
   { code: "too-many-cells", cells: 300_030, limit: 250_000 },
 ];
@@ -187,7 +188,7 @@ describe("the two errors", () => {
   it("a refused argument is a value error, a result that does not exist is not available", () => {
     const codes = (kind: string) => new Set(examples.filter((f) => kindOf(f) === kind).map(({ code }) => code));
     expect([...codes("not-available")].sort()).toEqual([
-      "block-needs-rows", "constant-series", "covariance-not-positive", "exact-combination", "no-lags", "predicted-exactly",
+      "block-needs-rows", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags", "predicted-exactly",
       "singular-system", "steps-leave-nothing", "too-few-rows", "too-large", "unstable",
     ]);
     for (const code of ["gap", "covariance-asymmetric", "model-block", "bad-option"] as const) expect(codes("value")).toContain(code);

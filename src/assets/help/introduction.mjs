@@ -36,6 +36,7 @@ MODEL takes its settings and estimates the numbers anew.</p>
 <tr><td>bands</td><td>fitted, known</td><td>with the coefficients' sampling error, or without</td></tr>
 <tr><td>joint</td><td>no, yes</td><td>bands that hold for all rows and series together</td></tr>
 <tr><td>point</td><td>median, mean</td><td>which point forecast after a log or square root</td></tr>
+<tr><td>adjust, spare</td><td>no, yes; 0</td><td>GRANGER: Holm's correction; lags fitted beyond the order and not tested</td></tr>
 <tr><td>divisor</td><td>n, n-k</td><td>divisor of lagged covariances</td></tr>
 <tr><td>labels</td><td>auto, yes, no</td><td>labels in the result</td></tr>
 </table>
@@ -70,6 +71,22 @@ export const examples = {
     {
       formula: '=COMOVE.UNSTEP(B4:E160,"log, diff",H5:K16)',
       says: "Growth rates that continue the data, back in units.",
+    },
+  ],
+  ESTIMATES: [
+    {
+      formula: '=COMOVE.ESTIMATES(B4:E160,2,"cycle=52; waves=1")',
+      says: "Every coefficient with its standard error.",
+    },
+  ],
+  FITTED: [{ formula: "=COMOVE.FITTED(B4:E160,2)", says: "One row ahead, for every row." }],
+  RESIDUALS: [{ formula: "=COMOVE.RESIDUALS(B4:E160,G2#)", says: "What the block in G2 leaves over." }],
+  PARTIALLAG: [{ formula: "=COMOVE.PARTIALLAG(B4:E160,6)", says: "Lags 1 to 6, each with its test." }],
+  IMPLIEDCOV: [{ formula: "=COMOVE.IMPLIEDCOV(G2#,4)", says: "Compare with LAGCOV of the data." }],
+  GRANGER: [
+    {
+      formula: '=COMOVE.GRANGER(B4:E160,2,"adjust=yes")',
+      says: "Row = effect, column = cause; corrected for looking at all pairs.",
     },
   ],
   ORDER: [{ formula: "=COMOVE.ORDER(B4:E160,6)", says: "Orders 0 to 6 side by side." }],

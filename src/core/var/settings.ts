@@ -47,3 +47,16 @@ export const allLags = (order: number): number[] => Array.from({ length: order }
 
 /** True when some lag between 1 and the order is left out. */
 export const isSubset = (lags: readonly number[]): boolean => lags.length !== (lags.at(-1) ?? 0);
+
+/** Least squares with a constant and nothing else, for a number of series. */
+export const plainShape = (series: number): Shape => ({
+  fit: "least-squares",
+  terms: "constant",
+  cycle: null,
+  waves: null,
+  steps: Array.from({ length: series }, () => []),
+  longRun: null,
+  movingAverage: 0,
+  pull: DEFAULT_PULL,
+  fade: DEFAULT_FADE,
+});

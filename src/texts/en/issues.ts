@@ -174,7 +174,9 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     "The equations for the coefficients have no single solution for these data. Look for series that repeat each other, or use fewer lags.",
   unstable: ({ modulus }) =>
     `This model is not stable: its largest root is ${modulus.toFixed(4)}, so it has no stationary state. Use differences, or correct the coefficients.`,
-  "no-lags": () => "This model has order 0: no lags, so there are no roots to show.",
+  "no-lags": () =>
+    "This model has order 0: it has no lags, so there is nothing to show about them. Use an order of 1 or more.",
+  "needs-two-series": () => "One series alone has no other to be led by. Point at two or more.",
   "too-large": () =>
     "Some numbers run beyond what a sheet can hold. Divide the series by a power of ten; if a long forecast explodes, look at the largest root with ROOTS.",
   "too-many-cells": ({ cells, limit }) =>

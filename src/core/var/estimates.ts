@@ -1,0 +1,50 @@
+import { studentQuantile, studentTwoSided } from "../distributions";
+import { coefficientRoots } from "./coefficient-covariance";
+import type { VarModel } from "./model";
+import type { Regressor } from "./regressors";
+import type { Sample } from "./sample";
+import { orderOf } from "./settings";
+import { stepSample } from "./stepped";
+
+/** One coefficient with what is known of it. */
+export interface CoefficientEstimate {
+  readonly equation: number;
+  readonly regressor: Regressor;
+  readonly coefficient: number;
+  readonly low: number;
+  readonly high: number;
+  readonly error: number;
+  readonly t: number;
+  readonly p: number;
+}
+
+/**
+ * Every coefficient of a fitted model, equation by equation in block order, with standard error, Student t on
+ * T − q degrees of freedom and limits that hold with the stated coverage.
+ * @throws Issue "covariance-not-positive" when nothing is left to err by
+ * Source: Lütkepohl (2005), 3.2.2
+ */
+export function estimates(model: VarModel, sample: Sample, coverage: number): CoefficientEstimate[] {
+  const stepped = stepSample(sample, model.settings.steps);
+  const { inverseRoot, root } = coefficientRoots(model, stepped);
+  const freedom = stepped.y.length - orderOf(model.settings) - model.regressors.length;
+  const reach = studentQuantile((1 + coverage) / 2, freedom);
+  const length = (row: readonly number[]) => Math.sqrt(row.reduce((sum, v) => sum + v * v, 0));
+  return root.flatMap((noise, equation) =>
+    model.regressors.map((regressor, r) => {
+      const coefficient = model.coefficients[r][equation];
+      const error = length(inverseRoot[r]) * length(noise);
+      const t = coefficient / error;
+      return {
+        equation,
+        regressor,
+        coefficient,
+        low: coefficient - reach * error,
+        high: coefficient + reach * error,
+        error,
+        t,
+        p: studentTwoSided(t, freedom),
+      };
+    }),
+  );
+}

@@ -1,0 +1,16 @@
+import { answer } from "./answer";
+import { granger } from "../sheet/calls/granger";
+
+/**
+ * P-values that the past of the column series does not help to predict the row series, all others kept in. A small value says that it helps; it is not a proof of cause.
+ * @customfunction GRANGER
+ * @helpurl https://localhost:3000/help/index.html#GRANGER
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose settings to use.
+ * @param [options] Options as "key=value; key=value" or as two columns: adjust, spare, terms, cycle, waves, steps and more.
+ * @param [drivers] Outside series, one per column, beside the series.
+ * @returns {any[][]} One row per effect, one column per cause.
+ */
+export function GRANGER(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
+  return answer(granger, { series, model, options, drivers });
+}
