@@ -3,6 +3,7 @@ import { lagcov } from "../sheet/calls/lagcov";
 import { impliedcov } from "../sheet/calls/impliedcov";
 import { partiallag } from "../sheet/calls/partiallag";
 import { lagcorr } from "../sheet/calls/lagcorr";
+import { leadlag } from "../sheet/calls/leadlag";
 
 /**
  * Covariance matrices of the series at each lag. A large entry says that the column series leads the row series by that many rows.
@@ -39,7 +40,7 @@ export function LAGCORR(series: any[][], lags: any[][], options?: any[][]): any[
  * @param [options] Options as "key=value; key=value" or as two columns: labels.
  * @returns {any[][]} One matrix per lag, stacked downwards.
  */
-export function PARTIALLAG(series: any[][], lags: any, options?: any[][]): any[][] {
+export function PARTIALLAG(series: any[][], lags: any[][], options?: any[][]): any[][] {
   return answer(partiallag, { series, lags, options });
 }
 
@@ -51,6 +52,19 @@ export function PARTIALLAG(series: any[][], lags: any, options?: any[][]): any[]
  * @param lags The largest lag, from 0.
  * @returns {any[][]} One matrix per lag, stacked downwards.
  */
-export function IMPLIEDCOV(model: any[][], lags: any): any[][] {
+export function IMPLIEDCOV(model: any[][], lags: any[][]): any[][] {
   return answer(impliedcov, { model, lags });
+}
+
+/**
+ * Which series leads which and by how many rows, after the leader's own memory is taken out of both. A lead is not a cause.
+ * @customfunction LEADLAG
+ * @helpurl https://localhost:3000/help/index.html#LEADLAG
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param lags Largest lag to look at; 0 is the same row.
+ * @param [options] Options as "key=value; key=value" or as two columns: labels.
+ * @returns {any[][]} One row per ordered pair, the clearest lead first, each with a reading in words.
+ */
+export function LEADLAG(series: any[][], lags: any[][], options?: any[][]): any[][] {
+  return answer(leadlag, { series, lags, options });
 }
