@@ -120,6 +120,20 @@ export type IssueFacts =
   | { readonly code: "unstable"; readonly modulus: number }
   | { readonly code: "no-lags" }
   | { readonly code: "needs-two-series" }
+  | { readonly code: "too-many-looks"; readonly looks: number; readonly limit: number }
+  | { readonly code: "start-needed"; readonly modulus: number }
+  | { readonly code: "drivers-not-here"; readonly call: string }
+  | { readonly code: "plan-rows"; readonly have: number; readonly limit: number }
+  | { readonly code: "plan-names"; readonly plan: readonly string[]; readonly series: readonly string[] }
+  | {
+      readonly code: "plan-domain";
+      readonly step: "log" | "sqrt";
+      readonly series: number;
+      readonly ahead: number;
+      readonly value: number;
+    }
+  | { readonly code: "plan-too-large"; readonly imposed: number }
+  | { readonly code: "plan-singular" }
   | { readonly code: "too-large" }
   | { readonly code: "too-many-cells"; readonly cells: number; readonly limit: number };
 

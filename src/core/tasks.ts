@@ -1,6 +1,10 @@
 import { forecastAhead, type AheadRequest } from "./forecast/ahead";
 import { forecastBands, type BandsRequest } from "./forecast/bands";
 import { requireFinite } from "./forecast/finite";
+import { responsesTo, shockShares, type ResponseRequest } from "./forecast/responses";
+import { shockPast, type ShockPastRequest } from "./forecast/shock-past";
+import { simulate, type SimulateRequest } from "./forecast/simulate";
+import { whatIf, type WhatIfRequest } from "./forecast/what-if";
 import type { Matrix } from "./matrix";
 import { lagCorrelations, lagCovariances, type Divisor } from "./moments/lag-covariance";
 import { applySteps, undoSteps, type StepPlan } from "./prepare/steps";
@@ -9,6 +13,7 @@ import { estimates } from "./var/estimates";
 import { fittedLevels, residualRows } from "./var/one-step-levels";
 import { grangerPValues, holm } from "./diagnostics/granger";
 import { partialLags } from "./moments/partial-lag";
+import { leadsAndLags, type LeadLagRequest } from "./moments/lead-lag";
 import { impliedCovariances } from "./moments/implied-covariance";
 import type { VarModel } from "./var/model";
 import { compareOrders } from "./var/order";
@@ -69,9 +74,15 @@ export const tasks = {
     partialLags(series, lags),
   impliedCovariance: ({ model, lags }: { readonly model: VarModel; readonly lags: number }) =>
     impliedCovariances(model, lags),
+  leadLag: (request: LeadLagRequest) => leadsAndLags(request),
   roots: ({ model }: { readonly model: VarModel }) => rootsOf(model),
   ahead: (request: AheadRequest, run: Runner) => forecastAhead(request, run.fit),
   bands: (request: BandsRequest, run: Runner) => forecastBands(request, run.fit),
+  whatIf: (request: WhatIfRequest, run: Runner) => whatIf(request, run.fit),
+  response: (request: ResponseRequest) => responsesTo(request),
+  shockShare: (request: Omit<ResponseRequest, "shock">) => shockShares(request),
+  shockPast: (request: ShockPastRequest, run: Runner) => shockPast(request, run.fit),
+  simulate: (request: SimulateRequest) => simulate(request),
 };
 
 export type Tasks = typeof tasks;

@@ -37,13 +37,19 @@ export const isBlank = (cell: Cell): cell is null =>
  * Ragged rows are padded with blanks; an omitted argument is null.
  */
 export function toCells(raw: unknown): Cell[][] | null {
+  const cells = toRectangle(raw);
+  return cells === null || cells.every((row) => row.every(isBlank)) ? null : cells;
+}
+
+/** The same where blanks count: only an argument that is left out, or holds no cell at all, is null. */
+export function toRectangle(raw: unknown): Cell[][] | null {
   if (raw === null || raw === undefined) return null;
   const rows = Array.isArray(raw)
     ? raw.map((row: unknown) => (Array.isArray(row) ? (row as unknown[]) : [row]))
     : [[raw]];
   const width = rows.reduce((w, row) => Math.max(w, row.length), 0);
   const cells = rows.map((row) => Array.from({ length: width }, (_, j) => toCell(row[j])));
-  return cells.length === 0 || width === 0 || cells.every((row) => row.every(isBlank)) ? null : cells;
+  return cells.length === 0 || width === 0 ? null : cells;
 }
 
 /** How a cell is quoted in a message. */

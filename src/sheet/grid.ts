@@ -67,7 +67,7 @@ export function surveySeries(raw: unknown, range = "series", gaps: Gaps = "refus
 }
 
 /** Text and no numbers in the first row that is not blank. */
-const isHeader = (row: readonly Cell[]): boolean =>
+export const isHeader = (row: readonly Cell[]): boolean =>
   row.some((cell) => typeof cell === "string" && !isBlank(cell)) &&
   !row.some((cell) => typeof cell === "number");
 
@@ -76,7 +76,7 @@ export const defaultNames = (count: number, letter: string): string[] =>
 
 const NUMBER_LIKE = /^[+-]?[\d.,'\s\u00a0\u202f]*\d[\d.,'\s\u00a0\u202f]*(e[+-]?\d+)?\s*%?$/i;
 
-function readHeader(row: readonly Cell[], range: string): { names: string[]; problems: IssueFacts[] } {
+export function readHeader(row: readonly Cell[], range: string): { names: string[]; problems: IssueFacts[] } {
   const names: string[] = [];
   const problems: IssueFacts[] = [];
   row.forEach((cell, k) => {
@@ -90,7 +90,7 @@ function readHeader(row: readonly Cell[], range: string): { names: string[]; pro
   return { names, problems };
 }
 
-function cellProblem(cell: Cell, gaps: Gaps, range: string, name: string, row: number): IssueFacts[] {
+export function cellProblem(cell: Cell, gaps: Gaps, range: string, name: string, row: number): IssueFacts[] {
   if (typeof cell === "number") return [];
   if (isBlank(cell)) return gaps === "allow" ? [] : [{ code: "gap", range, name, row }];
   return [{ code: "not-a-number-cell", range, name, row, found: describeCell(cell) }];

@@ -23,6 +23,8 @@ const NOT_AVAILABLE: ReadonlySet<IssueCode> = new Set<IssueCode>([
   "unstable",
   "no-lags",
   "needs-two-series",
+  "start-needed",
+  "plan-singular",
   "too-large",
 ]);
 

@@ -1,6 +1,8 @@
 import type { Allowed } from "../core/issue";
 import type { Divisor } from "../core/moments/lag-covariance";
 import type { Point } from "../core/forecast/ahead";
+import type { Shock } from "../core/forecast/responses";
+import { LARGEST_SEED } from "../core/random";
 import type { StepPlan } from "../core/prepare/steps";
 import type { Criterion, FitMethod, Terms } from "../core/var/settings";
 import { parseSteps } from "./steps-text";
@@ -25,6 +27,9 @@ export interface OptionValues {
   readonly point: Point;
   readonly adjust: "no" | "yes";
   readonly spare: number;
+  readonly draws: number;
+  readonly seed: number;
+  readonly shock: Shock;
   readonly divisor: Divisor;
   readonly labels: "auto" | "yes" | "no";
 }
@@ -113,6 +118,9 @@ export const OPTIONS: { readonly [K in OptionKey]: OptionSpec<OptionValues[K]> }
   point: choice("median", "mean"),
   adjust: choice("no", "yes"),
   spare: whole(0, 1000),
+  draws: whole(100, 100_000),
+  seed: whole(0, LARGEST_SEED),
+  shock: choice("orthogonal", "unit", "generalised"),
   divisor: choice("n", "n-k"),
   labels: choice("auto", "yes", "no"),
 };

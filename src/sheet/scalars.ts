@@ -25,6 +25,21 @@ export function readWhole(raw: unknown, argument: string, from: number, to: numb
 /** Rows ahead, 1 … 10,000. */
 export const readHorizon = (raw: unknown): number => readWhole(raw, "horizon", 1, 10_000);
 
+/** One of the series, by name or by column number from 1. @returns its column counted from 0 */
+export function readTarget(raw: unknown, names: readonly string[]): number {
+  const values = ["the name of a series", `a column number from 1 to ${names.length}`];
+  const allowed: Allowed = { kind: "one-of", values };
+  const cell = readCell(raw, "target", allowed);
+  const column =
+    typeof cell === "string"
+      ? names.indexOf(cell.trim())
+      : typeof cell === "number" && Number.isInteger(cell)
+        ? cell - 1
+        : -1;
+  if (column >= 0 && column < names.length) return column;
+  throw new Issue({ code: "bad-argument", argument: "target", found: describeCell(cell), allowed });
+}
+
 /**
  * The lags of a look: one number L means 0 … L, several cells mean just those lags, negative and repeated allowed.
  * @param rows rows of the series, which bound the lags

@@ -37,6 +37,9 @@ const PLAIN: Readonly<Record<string, unknown>> = {
   model: block,
   steps: [["log, diff"]],
   values: [[0.01, 0.02], [0.03, -0.01]],
+  plan: [[null, 20], [11, null]],
+  target: "sales",
+  rows: 6,
 }; // prettier-ignore
 
 const plainUses = functions.map((f): CallOf => [

@@ -10,8 +10,8 @@ const metadata = await buildMetadata({ baseUrl: DEVELOPMENT_URL });
 const { functions } = metadata;
 const parameters = functions.flatMap((f) => f.parameters.map((p) => ({ ...p, of: f.id })));
 
-/** The only argument that is one value and not a range. */
-const SCALARS = ["horizon"];
+/** The arguments that are one value and not a range. */
+const SCALARS = ["horizon", "rows", "target"];
 
 describe("functions.json as a whole", () => {
   it("lists exactly the functions that the wrapper modules export", () =>

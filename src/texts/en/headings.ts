@@ -10,5 +10,11 @@ export const headings = {
   effect: "effect",
   statistic: "statistic",
   pValue: "p-value",
+  leadLag: ["leader", "follower", "lag", "correlation", "bound", "p-value", "reading"],
+  shockTo: "shock to",
+  ahead: "ahead",
+  dueTo: (name: string) => `due to ${name}`,
+  actual: "actual",
+  baseline: "baseline",
   roots: ["modulus", "real", "imaginary", "period (rows)", "reading"],
 } as const;

@@ -176,6 +176,22 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `This model is not stable: its largest root is ${modulus.toFixed(4)}, so it has no stationary state. Use differences, or correct the coefficients.`,
   "no-lags": () =>
     "This model has order 0: it has no lags, so there is nothing to show about them. Use an order of 1 or more.",
+  "too-many-looks": ({ looks, limit }) =>
+    `This would compare ${grouped(looks)} pairs and lags; at most ${grouped(limit)} are allowed with so many rows. Use fewer lags or series.`,
+  "start-needed": ({ modulus }) =>
+    `This model is not stable: its largest root is ${modulus.toFixed(4)}, so it has no stationary state to begin from. Give the rows before the draw as start.`,
+  "drivers-not-here": ({ call }, { drivers }) =>
+    `This model uses the drivers ${names(drivers)}, and ${call} has no place for them. Fit a block without drivers.`,
+  "plan-rows": ({ have, limit }) =>
+    `The plan has ${plural(have, "row")} under its names; 1 to ${grouped(limit)} are needed, one per row ahead. Blank cells are free.`,
+  "plan-names": ({ plan, series }) =>
+    `The plan is headed ${names(plan)}; the series are ${names(series)}. Use the same names in the same order.`,
+  "plan-domain": ({ step, series, ahead, value }, wording) =>
+    `Plan ${wording.series[series]}, row ${grouped(ahead)} ahead: ${value} has no ${step === "log" ? "logarithm" : "square root"}, which the steps of this series take. ${step === "log" ? "Impose a value above 0" : "Impose 0 or more"}, or choose other steps.`,
+  "plan-too-large": ({ imposed }) =>
+    `The plan imposes ${plural(imposed, "cell")}, too many so far ahead to weigh against each other. Impose fewer cells, or plan fewer rows.`,
+  "plan-singular": () =>
+    "The imposed cells cannot be told apart: under this model some follow from the others. Leave some of them blank, or look at the largest root with ROOTS.",
   "needs-two-series": () => "One series alone has no other to be led by. Point at two or more.",
   "too-large": () =>
     "Some numbers run beyond what a sheet can hold. Divide the series by a power of ten; if a long forecast explodes, look at the largest root with ROOTS.",
