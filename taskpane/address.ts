@@ -8,7 +8,11 @@ export interface Region {
   readonly columns: number;
 }
 
-const CELL = /^\$?([A-Z]{1,3})\$?(\d{1,7})$/i;
+/** Rows of a sheet: what a whole column such as B:E holds. */
+const ALL_ROWS = 1_048_576;
+
+const CELL = /^\$?([A-Z]{1,3})\$?([1-9]\d{0,6})$/i;
+const COLUMN = /^\$?([A-Z]{1,3})$/i;
 
 /** Letters of a column, 0 → A. */
 export function columnLetters(column: number): string {
@@ -19,44 +23,65 @@ export function columnLetters(column: number): string {
 const columnNumber = (letters: string): number =>
   [...letters.toUpperCase()].reduce((sum, letter) => sum * 26 + letter.charCodeAt(0) - 64, 0) - 1;
 
-/** Reads an address such as Data!B4:E160 or 'Cold store'!B4; null when it is none. */
+/** A sheet's name, quoted or without any sign that needs quotes, and the cells behind it. */
+const ADDRESS = /^(?:('(?:[^']|'')+'|[^'!,:]+)!)?([^'!,]+)$/;
+
+/** The sheet's name without its quotes, and the cells without the sheet; cells are blank in what is no address. */
+export function splitAddress(address: string): { readonly sheet: string | null; readonly cells: string } {
+  const [, name, cells = ""] = ADDRESS.exec(address.trim()) ?? [];
+  if (name === undefined) return { sheet: null, cells };
+  return { sheet: name.replace(/^'(.*)'$/, "$1").replaceAll("''", "'"), cells };
+}
+
+/** Reads an address such as Data!B4:E160, 'Cold store'!B4 or Data!B:E; null when it is none. */
 export function parseAddress(address: string): Region | null {
-  const at = address.lastIndexOf("!");
-  const sheet =
-    at < 0
-      ? null
-      : address
-          .slice(0, at)
-          .replace(/^'(.*)'$/, "$1")
-          .replaceAll("''", "'");
-  const [first, last = first, ...more] = address
-    .slice(at + 1)
-    .trim()
-    .split(":");
-  const from = CELL.exec(first);
-  const to = CELL.exec(last);
-  if (!from || !to || more.length > 0 || from[2] === "0" || to[2] === "0") return null;
-  const corners = [from, to].map(([, letters, digits]) => ({
+  const { sheet, cells } = splitAddress(address);
+  const [first, last = first, ...more] = cells.split(":");
+  if (more.length > 0) return null;
+  const columns = cells.includes(":") ? [COLUMN.exec(first), COLUMN.exec(last)] : [];
+  if (columns[0] && columns[1]) {
+    const [from, to] = [columns[0], columns[1]].map(([, letters]) => columnNumber(letters));
+    return { sheet, row: 0, rows: ALL_ROWS, column: Math.min(from, to), columns: Math.abs(from - to) + 1 };
+  }
+  const corners = [CELL.exec(first), CELL.exec(last)];
+  if (!corners[0] || !corners[1]) return null;
+  const [from, to] = [corners[0], corners[1]].map(([, letters, digits]) => ({
     row: Number(digits) - 1,
     column: columnNumber(letters),
   }));
-  const row = Math.min(corners[0].row, corners[1].row);
-  const column = Math.min(corners[0].column, corners[1].column);
   return {
     sheet,
-    row,
-    column,
-    rows: Math.abs(corners[0].row - corners[1].row) + 1,
-    columns: Math.abs(corners[0].column - corners[1].column) + 1,
+    row: Math.min(from.row, to.row),
+    column: Math.min(from.column, to.column),
+    rows: Math.abs(from.row - to.row) + 1,
+    columns: Math.abs(from.column - to.column) + 1,
   };
 }
 
-const quoted = (sheet: string): string =>
-  /^[A-Za-z_][\w.]*$/.test(sheet) ? sheet : `'${sheet.replaceAll("'", "''")}'`;
+/** Quotes a sheet's name where a formula would misread it: blanks, signs, or the look of a cell such as Q1. */
+export function quoteSheet(sheet: string): string {
+  const plain = /^[A-Za-z_][\w.]*$/.test(sheet) && !CELL.test(sheet) && !/^(rc?|c|r\d*c\d*)$/i.test(sheet);
+  return plain ? sheet : `'${sheet.replaceAll("'", "''")}'`;
+}
 
 /** Writes an address; a sheet name is quoted where it must be. */
 export function formatAddress({ sheet, row, column, rows, columns }: Region): string {
-  const first = `${columnLetters(column)}${row + 1}`;
-  const last = `${columnLetters(column + columns - 1)}${row + rows}`;
-  return `${sheet === null ? "" : `${quoted(sheet)}!`}${first}${first === last ? "" : `:${last}`}`;
+  const [left, right] = [columnLetters(column), columnLetters(column + columns - 1)];
+  const first = `${left}${row + 1}`;
+  const last = `${right}${row + rows}`;
+  const cells = rows === ALL_ROWS ? `${left}:${right}` : first === last ? first : `${first}:${last}`;
+  return sheet === null ? cells : `${quoteSheet(sheet)}!${cells}`;
 }
+
+/** The address without its sheet, as people say it. */
+export const cellsOf = (address: string): string => splitAddress(address).cells;
+
+/** Do two regions share a cell? */
+export const overlap = (a: Region, b: Region): boolean =>
+  a.sheet === b.sheet &&
+  a.row < b.row + b.rows &&
+  b.row < a.row + a.rows &&
+  a.column < b.column + b.columns &&
+  b.column < a.column + a.columns;
+
+export const isOneCell = ({ rows, columns }: Region): boolean => rows === 1 && columns === 1;

@@ -1,123 +1,140 @@
 import { paneWords as words } from "../src/texts/en";
-import { formatAddress, parseAddress } from "./address";
 import { element } from "./elements";
+import { freePlace } from "./free-place";
 import type { SheetHost } from "./host/sheet-host";
 import { readSelection } from "./reading";
 import { readingView } from "./reading-view";
-import { forecastFormula, forecastRegion, initialState, isClean, placeOf, type PaneState } from "./state";
+import { forecastSize, initialState, isClean, meaningOf, placeOf, type Block, type PaneState } from "./state";
+import { writeForecast } from "./write-forecast";
+import { writeForm } from "./write-form";
 
 export interface PaneOptions {
-  readonly helpUrl?: string;
+  readonly helpUrl: string;
+  /** A block to begin with, before anything is selected. */
+  readonly firstBlock?: string;
   /** More controls at the foot, such as those of the embedded page. */
   readonly extras?: HTMLElement;
 }
 
 /** Builds the pane inside an element and keeps it in step with the selection. */
-export function mountPane(root: HTMLElement, host: SheetHost, { helpUrl, extras }: PaneOptions = {}): void {
+export function mountPane(
+  root: HTMLElement,
+  host: SheetHost,
+  { helpUrl, firstBlock, extras }: PaneOptions,
+): void {
   let state: PaneState = initialState;
+  let shown: Block | null | undefined;
+  let looks = 0;
+
   const block = element("div", { className: "block" });
   block.setAttribute("aria-live", "polite");
   const form = writeForm(
-    (changes) => update(changes),
+    ({ wishes, place }) =>
+      update({ wishes: { ...state.wishes, ...wishes }, place: place ?? state.place, notice: null }),
     () => void write(),
   );
-  const notice = element("p", { className: "notice", hidden: true });
+  const notice = element("p", { className: "notice" });
   notice.setAttribute("role", "status");
   root.classList.add("comove-pane");
   root.replaceChildren(
     element(
       "header",
       {},
-      element("h1", { textContent: words.title }),
-      element("p", { textContent: words.lead }),
+      element("img", { src: "assets/icon-64.png", alt: "", width: 36, height: 36 }),
+      element(
+        "div",
+        {},
+        element("h1", { textContent: words.title }),
+        element("p", { textContent: words.lead }),
+      ),
     ),
-    element("section", {}, element("h2", { textContent: words.station }), block, form.element, notice),
-    cautions(),
-    ...(helpUrl
-      ? [
-          element(
-            "p",
-            {},
-            element("a", { href: helpUrl, target: "_blank", rel: "noopener", textContent: words.help }),
-          ),
-        ]
-      : []),
+    element("section", {}, element("h2", { textContent: words.station }), block),
+    form.element,
+    notice,
+    foot(helpUrl),
     ...(extras ? [extras] : []),
   );
 
   function update(changes: Partial<PaneState>): void {
     state = { ...state, ...changes };
-    block.replaceChildren(...readingView(state));
+    // drawn anew only for another block, so that a focused button keeps its focus
+    if (state.block !== shown) block.replaceChildren(...blockView(state.block));
+    shown = state.block;
     form.show(state);
     notice.hidden = state.notice === null;
     notice.textContent = state.notice?.text ?? "";
     notice.dataset["kind"] = state.notice?.kind ?? "";
   }
 
+  const blockView = (held: Block | null): HTMLElement[] =>
+    held
+      ? readingView(held, (cell) => void attempt(() => host.select(cell).then(() => ({}))))
+      : [element("p", { textContent: words.nothing })];
+
+  /** Reads a block; null when it holds no series. */
+  async function read(address: string): Promise<Block | null> {
+    const reading = readSelection(await host.readBlock(address), address);
+    if (reading.series.length === 0) return null;
+    const now: Block = { address, reading, free: null };
+    const size = forecastSize(reading, state.wishes.horizon);
+    return isClean(now) ? { ...now, free: await freePlace(host, address, size) } : now;
+  }
+
+  /** Follows the selection: a block is read and kept; a single cell outside it is a place for the result. */
   async function look(): Promise<void> {
-    const address = await host.selectedAddress();
-    const reading = readSelection(await host.readBlock(address));
-    // a new block gets a new proposal; the notice of the last write stays until something else is selected
-    update(address === state.address ? { reading } : { address, reading, place: null, notice: null });
+    const mine = ++looks;
+    await attempt(async () => {
+      const address = await host.selectedAddress();
+      const meaning = meaningOf(address, state);
+      // a refusal is answered by another place; what was done stays said
+      const notice = state.notice?.kind === "refused" ? null : state.notice;
+      const chosen = meaning === "place" ? { place: address, notice } : {};
+      // a block with something to mend is read again at every move, as the user may just have mended it
+      const mending = state.block !== null && !isClean(state.block);
+      if (meaning !== "block" && !mending) return chosen;
+      const found = await read(meaning === "block" ? address : state.block!.address);
+      if (mine !== looks) return {};
+      if (meaning !== "block") return { block: keepIfSame(state.block, found), ...chosen };
+      return found === null ? {} : { block: keepIfSame(state.block, found), place: null, notice: null };
+    }, words.oneBlock);
   }
 
   async function write(): Promise<void> {
-    update({ notice: await writeForecast(host, state) });
+    await attempt(() => writeForecast(host, state));
+    // what was written is shown, even where it lies out of sight
+    if (state.notice?.kind === "done") await attempt(() => host.select(placeOf(state)).then(() => ({})));
+  }
+
+  /** Does something with the host; what the host refuses is said, never lost. */
+  async function attempt(
+    work: () => Promise<Partial<PaneState>>,
+    failed: string = words.failed,
+  ): Promise<void> {
+    try {
+      update(await work());
+    } catch (fault) {
+      console.error(fault);
+      update({ notice: { kind: "refused", text: failed } });
+    }
   }
 
   host.onSelectionChanged(() => void look());
   update({});
-  void look();
+  void (firstBlock === undefined ? look() : attempt(async () => ({ block: await read(firstBlock) })));
 }
 
-/** Writes the forecast formula, unless something is in its way. */
-async function writeForecast(host: SheetHost, state: PaneState): Promise<PaneState["notice"]> {
-  const refused = (text: string) => ({ kind: "refused", text }) as const;
-  if (!Number.isInteger(state.horizon) || state.horizon < 1 || state.horizon > 10_000)
-    return refused(words.badHorizon);
-  const region = forecastRegion(state);
-  if (!region) return refused(words.badPlace(placeOf(state)));
-  try {
-    const { filled, first } = await host.contents(formatAddress(region));
-    if (first !== null) return refused(words.occupied(filled, first));
-    const corner = formatAddress({ ...region, rows: 1, columns: 1 });
-    const formula = forecastFormula(state);
-    await host.oneUndoStep(() => host.writeFormulas(corner, [[formula]]));
-    return { kind: "done", text: words.written(formula, corner) };
-  } catch {
-    return refused(words.failed);
-  }
-}
+/** The block held before, where nothing in it has changed: what is drawn from it need not be drawn anew. */
+const keepIfSame = (before: Block | null, now: Block | null): Block | null =>
+  JSON.stringify(before) === JSON.stringify(now) ? before : now;
 
-/** The controls that write a forecast; shown for a clean block only. */
-function writeForm(change: (changes: Partial<PaneState>) => void, submit: () => void) {
-  const horizon = element("input", { type: "number", min: "1", max: "10000", step: "1", name: "horizon" });
-  const place = element("input", { type: "text", name: "place", spellcheck: false, autocomplete: "off" });
-  const form = element(
-    "form",
-    { className: "write", noValidate: true },
-    element("label", {}, words.horizon, horizon),
-    element("label", {}, words.place, place),
-    element("button", { type: "submit", textContent: words.write }),
+/** Help, and the cautions: the first in plain sight, the others a click away. */
+function foot(helpUrl: string): HTMLElement {
+  const [first, ...others] = words.cautions.map((text) => element("p", { textContent: text }));
+  return element(
+    "footer",
+    {},
+    first,
+    element("details", {}, element("summary", { textContent: words.cautionsTitle }), ...others),
+    element("a", { href: helpUrl, target: "_blank", rel: "noopener", textContent: words.help }),
   );
-  horizon.addEventListener("input", () => change({ horizon: horizon.valueAsNumber }));
-  place.addEventListener("input", () => change({ place: place.value }));
-  form.addEventListener("submit", (event) => {
-    event.preventDefault();
-    submit();
-  });
-  const show = (state: PaneState) => {
-    form.hidden = !isClean(state) || parseAddress(state.address) === null;
-    if (document.activeElement !== horizon) horizon.value = String(state.horizon);
-    if (document.activeElement !== place) place.value = placeOf(state);
-  };
-  return { element: form, show };
 }
-
-const cautions = (): HTMLElement =>
-  element(
-    "details",
-    { className: "cautions" },
-    element("summary", { textContent: words.cautionsTitle }),
-    ...words.cautions.map((text) => element("p", { textContent: text })),
-  );

@@ -1,3 +1,4 @@
+import { pageWords as words } from "../texts/en/page";
 import type { BlankAs } from "./cells";
 import type { HostSurroundings } from "./host-function";
 import type { Grid } from "./workbook";
@@ -6,12 +7,20 @@ import type { Grid } from "./workbook";
 export function blankSwitch(around: HostSurroundings, { api }: Grid): HTMLElement {
   const box = document.createElement("fieldset");
   box.className = "blank-switch";
-  box.innerHTML = `<legend>Blank cells arrive as</legend>
-    <label><input type="radio" name="blank" value="nothing" checked> nothing</label>
-    <label><input type="radio" name="blank" value="zero"> 0, as on some older clients</label>`;
+  const title = Object.assign(document.createElement("legend"), { textContent: words.blanksTitle });
+  box.append(title, choice("nothing", words.blanksNothing, true), choice("zero", words.blanksZero, false));
   box.addEventListener("change", (event) => {
     around.blankAs = (event.target as HTMLInputElement).value as BlankAs;
     api.getFormula().executeCalculation();
   });
   return box;
+}
+
+function choice(value: BlankAs, text: string, checked: boolean): HTMLElement {
+  const label = document.createElement("label");
+  label.append(
+    Object.assign(document.createElement("input"), { type: "radio", name: "blank", value, checked }),
+    text,
+  );
+  return label;
 }

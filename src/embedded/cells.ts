@@ -17,8 +17,7 @@ export function toPlatform(value: BaseValueObject | null | undefined, blankAs: B
   if (value.isError()) return { type: "Error", basicValue: (value as ErrorValueObject).getErrorType() };
   if (value.isBoolean()) return Boolean(value.getValue());
   if (value.isNumber()) return Number(value.getValue());
-  const text = String(value.getValue());
-  return text === "" && blankAs === "zero" ? 0 : text;
+  return String(value.getValue());
 }
 
 /** A function's result as a value of the grid. */

@@ -1,131 +1,142 @@
-import type { SheetHost } from "../../taskpane/host/sheet-host";
-import { CellValueType, type ICellData } from "@univerjs/core";
-import { FormulaDataModel } from "@univerjs/preset-sheets-core";
+import { CellValueType, IUndoRedoService, type ICellData, type IRange } from "@univerjs/core";
+import { ILayoutService } from "@univerjs/preset-sheets-core";
+import { columnLetters, parseAddress, quoteSheet, splitAddress } from "../../taskpane/address";
+import { freeSheetName } from "../../taskpane/host/free-sheet-name";
+import type { Contents, SheetHost } from "../../taskpane/host/sheet-host";
+import { onSelectionMoved } from "./selection-moves";
+import { cellReader, rawValue, type Worksheet } from "./sheet-cells";
 import type { Grid } from "./workbook";
 
-type Worksheet = ReturnType<NonNullable<ReturnType<Grid["api"]["getActiveWorkbook"]>>["getActiveSheet"]>;
+const ROWS = 400;
+const COLUMNS = 40;
+
+/** Rows and columns kept in sight before a selection that is scrolled to. */
+const MARGIN = 3;
 
 /** The pane's view of the embedded sheet. */
 export class EmbeddedHost implements SheetHost {
+  /** The grid draws no charts. */
+  readonly canChart = false;
+  readonly undoesAtOnce = true;
+
   constructor(private readonly grid: Grid) {}
 
   selectedAddress(): Promise<string> {
     const sheet = this.#book.getActiveSheet();
     const range = sheet.getSelection()?.getActiveRange() ?? sheet.getRange(0, 0);
-    return Promise.resolve(`${quoted(sheet.getSheetName())}!${range.getA1Notation()}`);
+    return Promise.resolve(`${quoteSheet(sheet.getSheetName())}!${range.getA1Notation()}`);
+  }
+
+  select(address: string): Promise<void> {
+    const { sheet, cells } = this.#locate(address);
+    const book = this.#book;
+    if (book.getActiveSheet().getSheetId() !== sheet.getSheetId()) book.setActiveSheet(sheet);
+    const range = sheet.getRange(cells).activate();
+    sheet.scrollToCell(Math.max(0, range.getRow() - MARGIN), Math.max(0, range.getColumn() - MARGIN));
+    // so that the next key goes to the cell, not to the button that led here
+    this.grid.injector.get(ILayoutService).focus();
+    return Promise.resolve();
   }
 
   readBlock(address: string): Promise<unknown[][]> {
-    const { sheet, a1 } = this.#locate(address);
-    const { startRow, endRow, startColumn, endColumn } = sheet.getRange(a1).getRange();
-    const own = sheet.getSheet().getCellMatrix();
-    const spilled = this.#spilledCells(sheet);
-    const at = (row: number, column: number): unknown => {
-      const cell = own.getValue(row, column) ?? null;
-      const shown = cell?.v === undefined || cell.v === null ? (spilled?.[row]?.[column] ?? cell) : cell;
-      return rawValue(shown as ICellData | null);
-    };
+    const { sheet, range } = this.#region(address);
+    const at = cellReader(this.grid, sheet);
     return Promise.resolve(
-      Array.from({ length: endRow - startRow + 1 }, (_, i) =>
-        Array.from({ length: endColumn - startColumn + 1 }, (_, j) => at(startRow + i, startColumn + j)),
+      Array.from({ length: range.endRow - range.startRow + 1 }, (_, i) =>
+        Array.from({ length: range.endColumn - range.startColumn + 1 }, (_, j) =>
+          rawValue(at(range.startRow + i, range.startColumn + j)),
+        ),
       ),
     );
   }
 
-  writeFormulas(address: string, formulas: string[][]): Promise<void> {
-    const { sheet, a1 } = this.#locate(address);
-    sheet.getRange(a1).setValues(formulas.map((row) => row.map((formula) => ({ f: formula }))));
+  writeFormulas(address: string, formulas: readonly (readonly string[])[]): Promise<void> {
+    const { sheet, cells } = this.#locate(address);
+    sheet.getRange(cells).setValues(formulas.map((row) => row.map((formula): ICellData => ({ f: formula }))));
     return Promise.resolve();
   }
 
-  writeLabels(address: string, labels: string[][]): Promise<void> {
-    const { sheet, a1 } = this.#locate(address);
+  writeLabels(address: string, labels: readonly (readonly string[])[]): Promise<void> {
+    const { sheet, cells } = this.#locate(address);
     // a forced text stays text whatever it begins with
-    const cells = labels.map((row) =>
-      row.map((label): ICellData => ({ v: label, t: CellValueType.FORCE_STRING, f: null })),
-    );
-    sheet.getRange(a1).setValues(cells);
+    const forced = (label: string): ICellData => ({ v: label, t: CellValueType.FORCE_STRING, f: null });
+    sheet.getRange(cells).setValues(labels.map((row) => row.map(forced)));
     return Promise.resolve();
   }
 
   addSheet(name: string): Promise<string> {
-    const taken = new Set(this.#book.getSheets().map((sheet) => sheet.getSheetName().toLowerCase()));
-    let free = name;
-    for (let n = 2; taken.has(free.toLowerCase()); n++) free = `${name} ${n}`;
-    this.#book.create(free, 400, 40);
+    const book = this.#book;
+    const free = freeSheetName(
+      name,
+      book.getSheets().map((sheet) => sheet.getSheetName()),
+    );
+    const front = book.getActiveSheet();
+    book.create(free, ROWS, COLUMNS);
+    // the grid brings a new sheet to the front; a spreadsheet does so only when asked
+    book.setActiveSheet(front);
     return Promise.resolve(free);
   }
 
   nameRange(name: string, address: string): Promise<void> {
-    this.#book.insertDefinedName(name, address);
+    const book = this.#book;
+    if (book.getDefinedName(name)) book.deleteDefinedName(name);
+    book.insertDefinedName(name, address);
     return Promise.resolve();
   }
-
-  /** The embedded grid has no charts; the pane asks first. */
-  readonly canChart = false;
 
   addChart(): Promise<void> {
     return Promise.reject(new Error("The embedded sheet draws no charts."));
   }
 
-  async contents(address: string): Promise<{ filled: number; first: string | null }> {
-    const block = await this.readBlock(address);
-    const { sheet, a1 } = this.#locate(address);
-    const corner = sheet.getRange(a1).getRange();
+  contents(address: string): Promise<Contents> {
+    const { sheet, range } = this.#region(address);
+    const at = cellReader(this.grid, sheet);
     let filled = 0;
     let first: string | null = null;
-    block.forEach((row, i) =>
-      row.forEach((cell, j) => {
-        if (cell === null) return;
+    for (let row = range.startRow; row <= range.endRow; row++) {
+      for (let column = range.startColumn; column <= range.endColumn; column++) {
+        const cell = at(row, column);
+        // a formula may show nothing and still be in the way
+        if (rawValue(cell) === null && !cell?.f && !cell?.si) continue;
         filled++;
-        first ??= sheet.getRange(corner.startRow + i, corner.startColumn + j).getA1Notation();
-      }),
-    );
-    return { filled, first };
+        first ??= `${columnLetters(column)}${row + 1}`;
+      }
+    }
+    return Promise.resolve({ filled, first });
   }
 
-  /** The grid records each write as a step of its own. */
-  oneUndoStep<T>(work: () => Promise<T>): Promise<T> {
-    return work();
+  async oneUndoStep<T>(work: () => Promise<T>): Promise<T> {
+    const batch = this.grid.injector.get(IUndoRedoService).__tempBatchingUndoRedo(this.#book.getId());
+    try {
+      return await work();
+    } finally {
+      batch.dispose();
+    }
   }
 
   onSelectionChanged(listener: () => void): () => void {
-    const { api } = this.grid;
-    const heard = [api.Event.SelectionMoveEnd, api.Event.SelectionChanged, api.Event.ActiveSheetChanged].map(
-      (event) => api.addEvent(event, listener),
-    );
-    return () => heard.forEach((one) => one.dispose());
+    return onSelectionMoved(this.grid, listener);
   }
 
   get #book() {
     return this.grid.api.getActiveWorkbook()!;
   }
 
-  #locate(address: string): { sheet: Worksheet; a1: string } {
-    const at = address.lastIndexOf("!");
-    if (at < 0) return { sheet: this.#book.getActiveSheet(), a1: address };
-    const name = address.slice(0, at).replace(/^'|'$/g, "").replaceAll("''", "'");
+  #locate(address: string): { sheet: Worksheet; cells: string } {
+    const { sheet: name, cells } = splitAddress(address);
+    if (name === null) return { sheet: this.#book.getActiveSheet(), cells };
     const sheet = this.#book.getSheetByName(name);
     if (!sheet) throw new Error(`There is no sheet ${name}.`);
-    return { sheet, a1: address.slice(at + 1) };
+    return { sheet, cells };
   }
 
-  #spilledCells(sheet: Worksheet): Record<number, Record<number, ICellData>> | undefined {
-    const spilled = this.grid.injector.get(FormulaDataModel).getArrayFormulaCellData();
-    return spilled?.[this.#book.getId()]?.[sheet.getSheetId()] as
-      Record<number, Record<number, ICellData>> | undefined;
+  /** The cells of an address; rows beyond the sheet's last are left out. */
+  #region(address: string): { sheet: Worksheet; range: IRange } {
+    const { sheet } = this.#locate(address);
+    const region = parseAddress(address);
+    if (!region) throw new Error(`${address} is no address of cells.`);
+    const { row, column, rows, columns } = region;
+    const endRow = Math.min(row + rows, sheet.getMaxRows()) - 1;
+    return { sheet, range: { startRow: row, endRow, startColumn: column, endColumn: column + columns - 1 } };
   }
-}
-
-const quoted = (name: string): string =>
-  /^[A-Za-z_][\w.]*$/.test(name) ? name : `'${name.replaceAll("'", "''")}'`;
-
-/** A cell's value as the platform hands it over: null for blank, errors as rich values. */
-function rawValue(cell: ICellData | null | undefined): unknown {
-  const value = cell?.v;
-  if (value === undefined || value === null || value === "") return null;
-  if (cell!.t === CellValueType.BOOLEAN) return Boolean(value);
-  if (typeof value === "string" && /^#(N\/A|[A-Z]+[!?/0]*)$/.test(value))
-    return { type: "Error", basicValue: value };
-  return value;
 }

@@ -34,6 +34,11 @@ export function hostFunctionClass(
     override minParams = required;
     override maxParams = parameters;
 
+    /** The engine waits for the result of every one of our functions, as any may answer with a promise. */
+    override isAsync(): boolean {
+      return true;
+    }
+
     override calculate(...variants: FunctionVariantType[]): FunctionVariantType {
       const given = variants.map((variant) => argument(variant, around.blankAs));
       const args = Array.from({ length: parameters }, (_, i) => given[i] ?? null);

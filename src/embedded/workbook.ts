@@ -5,6 +5,10 @@ import englishLabels from "@univerjs/preset-sheets-core/locales/en-US";
 import "@univerjs/preset-sheets-core/lib/index.css";
 import { fetchListed, formulaConfig } from "./catalogue";
 import { demoBook } from "./demo/book";
+import { LEADS_HEAT } from "./demo/leads-sheet";
+import { tintCorrelations } from "./heat";
+import { explainOnHover } from "./hover-message";
+import { faultMessage } from "./message-strip";
 import type { HostSurroundings } from "./host-function";
 import { showLegibleNumbers } from "./legible-numbers";
 import { enableSpillReference } from "./spill-reference";
@@ -45,8 +49,11 @@ export async function openWorkbook(container: string, around: HostSurroundings):
   }
   const api = FUniver.newAPI(univer);
   api.createWorkbook(demoBook());
-  // both reach for services that exist only once a workbook is open
+  const grid: Grid = { api, injector };
+  // these reach for services that exist only once a workbook is open
   showLegibleNumbers(injector);
+  tintCorrelations(injector, LEADS_HEAT);
   cureStaleDependants(injector);
-  return { api, injector };
+  explainOnHover(injector, (sheet, row, column) => faultMessage(grid, around.faults, sheet, row, column));
+  return grid;
 }

@@ -1,9 +1,22 @@
-import type { Contents, SheetHost } from "./sheet-host";
+import { columnLetters, splitAddress } from "../address";
+import { freeSheetName } from "./free-sheet-name";
+import type { ChartRequest, Contents, SheetHost } from "./sheet-host";
+
+/** A batch may come while the user edits a cell; without this the program refuses it. */
+const WAIT_FOR_EDIT = { delayForCellEdit: true };
+
+type Batch<T> = (context: Excel.RequestContext) => Promise<T>;
 
 /** The pane's view of Excel. */
 export class OfficeHost implements SheetHost {
   readonly canChart = true;
-  #inOneStep = false;
+
+  /** The context of an undo step in progress: only what runs in one batch is taken back in one step. */
+  #step: Excel.RequestContext | null = null;
+
+  get undoesAtOnce(): boolean {
+    return Office.context.requirements.isSetSupported("ExcelApi", "1.20");
+  }
 
   selectedAddress(): Promise<string> {
     return this.#run(async (context) => {
@@ -14,10 +27,19 @@ export class OfficeHost implements SheetHost {
     });
   }
 
+  select(address: string): Promise<void> {
+    return this.#run(async (context) => {
+      const range = rangeAt(context, address);
+      range.worksheet.activate();
+      range.select();
+      await context.sync();
+    });
+  }
+
   readBlock(address: string): Promise<unknown[][]> {
     return this.#run(async (context) => {
-      // a whole column is a million rows: only what is used of it is read
       const range = rangeAt(context, address);
+      // a whole column is a million rows: only what is used of it is read
       const used = range.getUsedRangeOrNullObject(true);
       range.load(["rowIndex", "columnIndex", "columnCount"]);
       used.load(["values", "valueTypes", "rowIndex", "columnIndex"]);
@@ -35,14 +57,14 @@ export class OfficeHost implements SheetHost {
     });
   }
 
-  writeFormulas(address: string, formulas: string[][]): Promise<void> {
+  writeFormulas(address: string, formulas: readonly (readonly string[])[]): Promise<void> {
     return this.#run(async (context) => {
-      rangeAt(context, address).formulas = formulas;
+      rangeAt(context, address).formulas = formulas.map((row) => [...row]);
       await context.sync();
     });
   }
 
-  writeLabels(address: string, labels: string[][]): Promise<void> {
+  writeLabels(address: string, labels: readonly (readonly string[])[]): Promise<void> {
     return this.#run(async (context) => {
       // the apostrophe is not part of the value: it says that the rest is text
       rangeAt(context, address).values = labels.map((row) =>
@@ -57,9 +79,10 @@ export class OfficeHost implements SheetHost {
       const { worksheets } = context.workbook;
       worksheets.load("items/name");
       await context.sync();
-      const taken = new Set(worksheets.items.map((sheet) => sheet.name.toLowerCase()));
-      let free = name;
-      for (let n = 2; taken.has(free.toLowerCase()); n++) free = `${name} ${n}`;
+      const free = freeSheetName(
+        name,
+        worksheets.items.map((sheet) => sheet.name),
+      );
       worksheets.add(free);
       await context.sync();
       return free;
@@ -68,19 +91,20 @@ export class OfficeHost implements SheetHost {
 
   nameRange(name: string, address: string): Promise<void> {
     return this.#run(async (context) => {
-      context.workbook.names.add(name, rangeAt(context, address));
+      const { names } = context.workbook;
+      const before = names.getItemOrNullObject(name);
+      await context.sync();
+      if (!before.isNullObject) before.delete();
+      names.add(name, rangeAt(context, address));
       await context.sync();
     });
   }
 
-  addChart({ address, title, at }: { address: string; title: string; at: string }): Promise<void> {
+  addChart({ address, title, at }: ChartRequest): Promise<void> {
     return this.#run(async (context) => {
       const corner = rangeAt(context, at);
-      const chart = corner.worksheet.charts.add(
-        Excel.ChartType.line,
-        rangeAt(context, address),
-        Excel.ChartSeriesBy.columns,
-      );
+      const { charts } = corner.worksheet;
+      const chart = charts.add(Excel.ChartType.line, rangeAt(context, address), Excel.ChartSeriesBy.columns);
       chart.title.text = title;
       chart.setPosition(corner);
       await context.sync();
@@ -89,34 +113,38 @@ export class OfficeHost implements SheetHost {
 
   contents(address: string): Promise<Contents> {
     return this.#run(async (context) => {
-      const range = rangeAt(context, address);
-      range.load(["values", "rowIndex", "columnIndex"]);
+      const used = rangeAt(context, address).getUsedRangeOrNullObject(true);
+      used.load(["values", "formulas", "rowIndex", "columnIndex"]);
       await context.sync();
-      const found = range.values.flatMap((row, i) =>
-        row.flatMap((value, j) => (value === "" ? [] : [[i, j]])),
+      if (used.isNullObject) return { filled: 0, first: null };
+      // a formula may show nothing and still be in the way
+      const found = used.values.flatMap((row, i) =>
+        row.flatMap((value, j) => (value === "" && used.formulas[i][j] === "" ? [] : [[i, j]])),
       );
       if (found.length === 0) return { filled: 0, first: null };
       const [row, column] = found[0];
-      const first = range.getCell(row, column);
-      first.load("address");
-      await context.sync();
-      return { filled: found.length, first: first.address.slice(first.address.lastIndexOf("!") + 1) };
+      return {
+        filled: found.length,
+        first: `${columnLetters(used.columnIndex + column)}${used.rowIndex + row + 1}`,
+      };
     });
   }
 
-  async oneUndoStep<T>(work: () => Promise<T>): Promise<T> {
-    // older programs cannot join batches into one step; there each write is taken back by itself
-    this.#inOneStep = Office.context.requirements.isSetSupported("ExcelApi", "1.20");
-    try {
-      return await work();
-    } finally {
-      this.#inOneStep = false;
-    }
+  oneUndoStep<T>(work: () => Promise<T>): Promise<T> {
+    if (!this.undoesAtOnce) return work();
+    return Excel.run({ ...WAIT_FOR_EDIT, mergeUndoGroup: true }, async (context) => {
+      this.#step = context;
+      try {
+        return await work();
+      } finally {
+        this.#step = null;
+      }
+    });
   }
 
   onSelectionChanged(listener: () => void): () => void {
     const handler = async (): Promise<void> => listener();
-    const added = this.#run(async (context) => {
+    const added = Excel.run(WAIT_FOR_EDIT, async (context) => {
       const result = context.workbook.onSelectionChanged.add(handler);
       await context.sync();
       return result;
@@ -130,21 +158,16 @@ export class OfficeHost implements SheetHost {
       );
   }
 
-  #run<T>(batch: (context: Excel.RequestContext) => Promise<T>): Promise<T> {
-    // a batch may come while the user edits a cell; without the delay the program refuses it
-    return Excel.run({ delayForCellEdit: true, mergeUndoGroup: this.#inOneStep }, batch);
+  #run<T>(batch: Batch<T>): Promise<T> {
+    return this.#step ? batch(this.#step) : Excel.run(WAIT_FOR_EDIT, batch);
   }
 }
 
 /** A range by its address, on the sheet it names or the one in front. */
 function rangeAt(context: Excel.RequestContext, address: string): Excel.Range {
-  const at = address.lastIndexOf("!");
-  if (at < 0) return context.workbook.worksheets.getActiveWorksheet().getRange(address);
-  const name = address
-    .slice(0, at)
-    .replace(/^'(.*)'$/, "$1")
-    .replaceAll("''", "'");
-  return context.workbook.worksheets.getItem(name).getRange(address.slice(at + 1));
+  const { sheet, cells } = splitAddress(address);
+  const { worksheets } = context.workbook;
+  return (sheet === null ? worksheets.getActiveWorksheet() : worksheets.getItem(sheet)).getRange(cells);
 }
 
 /** Excel tells a blank by "", and an error only by the type beside its text. */

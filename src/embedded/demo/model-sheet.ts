@@ -1,0 +1,54 @@
+import { WrapStrategy } from "@univerjs/core";
+import { DATA, SEASON } from "./data-sheet";
+import { SheetBuilder } from "./sheet-builder";
+import { decimals, HEAD, HEAD_LEFT, SECTION, TITLE } from "./styles";
+
+const G = 6;
+const ROOTS = 8;
+const ORDERS = 6;
+const ORDER_AT = 15;
+
+/** The model as a block of cells, how fast it forgets, and why this order. */
+export function modelSheet() {
+  return new SheetBuilder("model", "Model")
+    .put(0, 0, "The model lies in cells", TITLE)
+    .height(0, 38)
+    .note(
+      1,
+      0,
+      11,
+      2,
+      "Columns are equations, rows what they multiply: next week's trips take 0.24 of the landings two weeks before. The last four rows are the covariance of what is left over. A pasted copy may be edited and used.",
+    )
+    .put(2, 0, "Coefficients", SECTION)
+    .put(3, 0, `=COMOVE.MODEL(${DATA},2,"${SEASON}")`, { ...HEAD_LEFT, tb: WrapStrategy.CLIP })
+    .dress(3, 1, 1, 4, HEAD)
+    .height(3, 28)
+    .dress(4, 1, 30, 4, decimals(3))
+    .put(2, G, "Roots: how fast it forgets", SECTION)
+    .put(3, G, "=COMOVE.ROOTS(A4#)", HEAD)
+    .dress(3, G + 1, 1, 3, HEAD)
+    .dress(3, G + 4, 1, 1, HEAD_LEFT)
+    .dress(4, G, ROOTS, 4, decimals(3))
+    .put(ORDER_AT - 1, G, "Orders compared on the same weeks", SECTION)
+    .put(ORDER_AT, G, `=COMOVE.ORDER(${DATA},${ORDERS - 1},"${SEASON}")`, HEAD)
+    .dress(ORDER_AT, G + 1, 1, 8, HEAD)
+    .dress(ORDER_AT, G + 9, 1, 1, HEAD_LEFT)
+    .height(ORDER_AT, 28)
+    .dress(ORDER_AT + 1, G + 1, ORDERS, 5, decimals(3))
+    .dress(ORDER_AT + 1, G + 6, ORDERS, 1, decimals(0))
+    .dress(ORDER_AT + 1, G + 7, ORDERS, 1, decimals(1))
+    .dress(ORDER_AT + 1, G + 8, ORDERS, 1, decimals(4))
+    .widths({
+      0: 186,
+      3: 92,
+      5: 20,
+      [G]: 80,
+      [G + 1]: 80,
+      [G + 2]: 88,
+      [G + 3]: 104,
+      [G + 4]: 80,
+      [G + 9]: 150,
+    })
+    .build(4);
+}
