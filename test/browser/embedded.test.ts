@@ -31,8 +31,8 @@ describe("the embedded sheet", () => {
   });
 
   it("spills a typed LAGCORR, and MODEL feeds AHEAD through its spill reference", async () => {
-    await sheet.type("Data", "G23", "=COMOVE.LAGCORR(B4:E160,1)");
-    const lags = await sheet.until("Data!G23:M31", (cells) => typeof cells[8][5] === "number");
+    await sheet.type("Data", "G24", "=COMOVE.LAGCORR(B4:E160,1)");
+    const lags = await sheet.until("Data!G24:M32", (cells) => typeof cells[8][5] === "number");
     expect(lags[0]).toEqual(["lag", "series", "landings", "ice", "electricity", "trips", "bound"]);
     expect(lags[1][2]).toBe(1);
 
@@ -77,18 +77,46 @@ describe("the embedded sheet", () => {
     const message = sheet.page.locator("#message");
     await message.waitFor({ state: "visible" });
     expect(await message.textContent()).toBe(
-      "For horizon, 0 will not do. Give a whole number from 1 to 10,000.",
+      "G40For horizon, 0 will not do. Give a whole number from 1 to 10,000.",
     );
     await sheet.shot("error");
     await sheet.select("Data", "G41");
     await message.waitFor({ state: "hidden" });
   });
 
+  it("explains #SPILL! too, and stays silent where a formula catches the error", async () => {
+    await sheet.type("Data", "T30", "=COMOVE.AHEAD(B4:E160,2)");
+    await sheet.type("Data", "U31", "in the way");
+    await sheet.until("Data!T30", ([[v]]) => isError(v, "#SPILL!"));
+    await sheet.select("Data", "T30");
+    await sheet.page.locator("#message").getByText("something stands in it").waitFor();
+    await sheet.clear("Data", "U31");
+    await sheet.type("Data", "T30", '=IFERROR(COMOVE.AHEAD(B4:E160,0),"caught")');
+    await sheet.until("Data!T30", ([[v]]) => v === "caught");
+    await sheet.select("Data", "T30");
+    await sheet.page.locator("#message").waitFor({ state: "hidden" });
+  });
+
+  it("puts the message beside the cell under the mouse", async () => {
+    await sheet.select("Blemishes", "A1");
+    const grid = (await sheet.page.locator("#grid").boundingBox())!;
+    // G4: right of the row numbers and columns A to F, below the formula line, the column letters and three rows
+    await sheet.page.mouse.move(
+      grid.x + 46 + 96 + 88 + 88 + 94 + 88 + 20 + 40,
+      grid.y + 28 + 20 + 38 + 26 + 24 + 14,
+      { steps: 8 },
+    );
+    await sheet.page.getByText("Series ice, row 24 is blank.").waitFor();
+    await sheet.shot("hover");
+    await sheet.page.mouse.move(5, 5);
+  });
+
   it("shows the function's description and arguments while a formula is typed", async () => {
-    await sheet.type("Data", "G44", "=COMOVE.AH", { enter: false });
+    await sheet.type("Data", "G34", "=COMOVE.AH", { enter: false });
     await sheet.page.getByText("COMOVE.AHEAD", { exact: true }).first().waitFor({ state: "visible" });
     await sheet.page.keyboard.type("EAD(");
     await sheet.page.getByText("Rows to forecast, 1 to 10,000.").first().waitFor({ state: "visible" });
+    await sheet.page.waitForTimeout(400);
     await sheet.shot("typing");
     await sheet.page.keyboard.press("Escape");
     await sheet.page.keyboard.press("Escape");
@@ -108,8 +136,17 @@ describe("the embedded sheet", () => {
     await sheet.until("Data!AH4", ([[value]]) => isError(value, "#VALUE!"));
   });
 
+  it("shows spilled numbers without a format at equal decimals and keeps all digits in the cells", async () => {
+    const column = (await sheet.read("Data!I25:I32")).flat() as number[];
+    expect(String(column[1]).length).toBeGreaterThan(12);
+    const shown = await Promise.all(column.map((_, i) => sheet.shown("Data", `I${25 + i}`)));
+    expect(shown).toEqual(column.map((value) => value.toFixed(5)));
+    // a number that was typed keeps the digits it was typed with
+    expect(await sheet.shown("Data", "B5")).toBe("155.8");
+  });
+
   it("fills the sheets that walk the job", async () => {
-    const leads = await sheet.until("Leads!A5:G25", (cells) => typeof cells[20][6] === "number");
+    const leads = await sheet.until("Leads!A4:G24", (cells) => typeof cells[20][6] === "number");
     // trips now against landings two weeks earlier: lag 2, row trips, column landings
     const [, , landings] = leads.find((row) => row[0] === 2 && row[1] === "trips")!;
     expect(landings as number).toBeGreaterThan(2 * (leads[1][6] as number));
@@ -117,12 +154,18 @@ describe("the embedded sheet", () => {
     const roots = await sheet.until("Model!G4:K12", (cells) => typeof cells[8][0] === "number");
     expect(roots[0]).toEqual(["modulus", "real", "imaginary", "period (rows)", "reading"]);
     await sheet.until("Model!G16:P22", (cells) => typeof cells[6][1] === "number");
+    const helps = await sheet.until("Helps!A4:E8", (cells) => typeof cells[4][1] === "number");
+    expect(helps[0]).toEqual(["effect", "landings", "ice", "electricity", "trips"]);
+    // trips follow landings; landings follow nothing
+    expect(helps[4][1] as number).toBeLessThan(0.001);
+    expect(Math.min(...(helps[1].slice(2) as number[]))).toBeGreaterThan(0.05);
+    await sheet.until("Helps!A12:H56", (cells) => typeof cells[44][7] === "number");
     const bands = await sheet.until("Forecast!B4:M16", (cells) => typeof cells[12][11] === "number");
     for (const row of bands.slice(1) as number[][]) {
       for (let k = 0; k < 12; k += 3) expect(row[k] < row[k + 1] && row[k + 1] < row[k + 2]).toBe(true);
     }
-    expect(isError((await sheet.read("Blemishes!H4"))[0][0], "#VALUE!")).toBe(true);
-    for (const name of ["Leads", "Model", "Forecast", "Blemishes"]) {
+    expect(isError((await sheet.read("Blemishes!G4"))[0][0], "#VALUE!")).toBe(true);
+    for (const name of ["Leads", "Model", "Helps", "Forecast", "Blemishes"]) {
       await sheet.select(name, "A1");
       await sheet.page.waitForTimeout(300);
       await sheet.shot(name.toLowerCase());

@@ -1,4 +1,4 @@
-import { existsSync, mkdirSync, readFileSync } from "node:fs";
+import { existsSync, mkdirSync, readFileSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { chromium, type Browser } from "playwright-core";
@@ -18,6 +18,7 @@ const INSTALLED = [
   "/usr/bin/google-chrome",
   "/usr/bin/chromium",
   "/usr/bin/chromium-browser",
+  "/usr/bin/microsoft-edge",
   "/Applications/Google Chrome.app/Contents/MacOS/Google Chrome",
   "/Applications/Microsoft Edge.app/Contents/MacOS/Microsoft Edge",
   "C:/Program Files/Google/Chrome/Application/chrome.exe",
@@ -27,18 +28,24 @@ const INSTALLED = [
 /** Starts a headless browser: the one named, the one that comes with the packages on Linux, or an installed one. */
 export async function launchBrowser(): Promise<Browser> {
   const named = process.env["COMOVE_BROWSER"];
-  if (named) return start(named);
+  if (named) {
+    if (!existsSync(named)) throw new Error(`COMOVE_BROWSER names ${named}, and there is no such file.`);
+    return start(named);
+  }
   if (process.platform === "linux" && process.arch === "x64") return startPackaged();
   const installed = INSTALLED.find((path) => existsSync(path));
   if (installed) return start(installed);
-  throw new Error("No browser was found. Install Chrome or Edge, or set COMOVE_BROWSER to the path of one.");
+  throw new Error(
+    "No browser was found. Install Chrome, Chromium or Edge, or set COMOVE_BROWSER to the path of one.",
+  );
 }
 
-const start = (executablePath: string, libraries?: string): Promise<Browser> =>
+const start = (executablePath: string, more: Record<string, string> = {}): Promise<Browser> =>
   chromium.launch({
     executablePath,
+    headless: true,
     args: ARGUMENTS,
-    env: { ...process.env, ...(libraries ? { LD_LIBRARY_PATH: libraries } : {}) } as Record<string, string>,
+    env: { ...process.env, ...more } as Record<string, string>,
   });
 
 /** The package unpacks into the temporary folder and takes whatever lies there already: so one folder per version. */
@@ -55,9 +62,26 @@ async function startPackaged(): Promise<Browser> {
     const executable = await packaged.executablePath();
     // the system libraries that a bare machine lacks travel with the package
     const libraries = await inflate("node_modules/@sparticuz/chromium/bin/al2023.tar.br");
-    return await start(executable, join(libraries, "lib"));
+    return await start(executable, {
+      LD_LIBRARY_PATH: join(libraries, "lib"),
+      FONTCONFIG_FILE: fontSettings(folder),
+    });
   } finally {
     if (before === undefined) delete process.env["TMPDIR"];
     else process.env["TMPDIR"] = before;
   }
+}
+
+/** A bare machine has no fonts either: those of the package stand in for the common ones, so that text is seen. */
+function fontSettings(folder: string): string {
+  const stand = (family: string) =>
+    `<alias binding="same"><family>${family}</family><prefer><family>Open Sans</family></prefer></alias>`;
+  const file = join(folder, "fonts.conf");
+  writeFileSync(
+    file,
+    `<?xml version="1.0"?><!DOCTYPE fontconfig SYSTEM "fonts.dtd"><fontconfig>
+<dir>${join(folder, "fonts", "fonts")}</dir><dir>/usr/share/fonts</dir><cachedir>${join(folder, "font-cache")}</cachedir>
+${["Arial", "system-ui", "sans-serif"].map(stand).join("\n")}</fontconfig>\n`,
+  );
+  return file;
 }

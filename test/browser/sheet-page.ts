@@ -25,12 +25,25 @@ export class SheetPage {
     private readonly site: { url: string; close(): Promise<void> },
   ) {}
 
-  static async open(width = 1500): Promise<SheetPage> {
+  /** @param prepare what is to be done before the page is loaded */
+  static async open(width = 1500, prepare?: (page: Page) => Promise<void>): Promise<SheetPage> {
     const site = await serveDist();
     const browser = await launchBrowser();
     const page = await browser.newPage({ viewport: { width, height: 820 } });
     const opened = new SheetPage(page, browser, site);
     opened.listen();
+    await page.addInitScript(() =>
+      document.addEventListener(
+        "securitypolicyviolation",
+        ({ violatedDirective, blockedURI, sourceFile }) => {
+          // a library asks whether text can be run as code, and takes the refusal for its answer
+          const asked = blockedURI === "eval" && sourceFile.endsWith("/functions.js");
+          if (!asked)
+            console.error(`refused by the content policy: ${violatedDirective} ${blockedURI} ${sourceFile}`);
+        },
+      ),
+    );
+    await prepare?.(page);
     await page.goto(site.url);
     await page.waitForFunction(() => "comovePage" in globalThis);
     await opened.until("Data!H4:K16", (cells) => typeof cells[12][3] === "number");
@@ -63,6 +76,19 @@ export class SheetPage {
         throw new Error(`${address} never came right; it holds ${JSON.stringify(cells).slice(0, 600)}`);
       await this.page.waitForTimeout(25);
     }
+  }
+
+  /** What a cell shows, which may be shorter than what it holds. */
+  shown(sheet: string, a1: string): Promise<unknown> {
+    return this.page.evaluate(
+      ([name, cell]) => {
+        const range = comovePage.grid.api.getActiveWorkbook().getSheetByName(name).getRange(cell);
+        const worksheet =
+          range.getSheet?.() ?? comovePage.grid.api.getActiveWorkbook().getSheetByName(name).getSheet();
+        return worksheet.getCell(range.getRow(), range.getColumn())?.v as unknown;
+      },
+      [sheet, a1],
+    );
   }
 
   /** Selects cells of a sheet, as a click and a drag would. */

@@ -1,4 +1,4 @@
-import { afterAll } from "vitest";
+import { afterAll, expect, it } from "vitest";
 import type { Contents, SheetHost } from "../../taskpane/host/sheet-host";
 import { SheetPage } from "../browser/sheet-page";
 import { sheetHostContract } from "./sheet-host-suite";
@@ -15,6 +15,8 @@ function remoteHost({ page }: SheetPage): SheetHost {
     ) as Promise<T>;
   return {
     canChart: false,
+    undoesAtOnce: true,
+    select: (address) => call<void>("select", address),
     selectedAddress: () => call<string>("selectedAddress"),
     readBlock: (address) => call<unknown[][]>("readBlock", address),
     writeFormulas: (address, formulas) => call<void>("writeFormulas", address, formulas),
@@ -57,4 +59,20 @@ sheetHostContract("the embedded sheet", async () => {
       return sheet.select(address.slice(0, at).replaceAll("'", ""), address.slice(at + 1));
     },
   };
+});
+
+it("everything written inside one undo step is taken back by one undo", async () => {
+  const read = () => sheet.read("Work!K1:K3");
+  await sheet.page.evaluate(() => {
+    const { host } = (globalThis as any).comovePage;
+    return host.oneUndoStep(async () => {
+      await host.writeLabels("Work!K1", [["a"]]);
+      await host.writeLabels("Work!K2", [["b"]]);
+      await host.writeFormulas("Work!K3", [["=1+1"]]);
+    });
+  });
+  await sheet.until("Work!K1:K3", (cells) => cells[2][0] === 2);
+  await sheet.page.evaluate(() => (globalThis as any).comovePage.grid.api.undo());
+  await sheet.page.waitForTimeout(300);
+  expect(await read()).toEqual([[null], [null], [null]]);
 });

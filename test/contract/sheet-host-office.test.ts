@@ -37,7 +37,12 @@ it.each([
   const fake = openFake(newest);
   const host = new OfficeHost();
   await host.writeLabels("Work!A1", [["before"]]);
-  await host.oneUndoStep(() => host.writeLabels("Work!A2", [["inside"]]));
+  // two writes, one batch: only a single batch is taken back in one step
+  await host.oneUndoStep(async () => {
+    await host.writeLabels("Work!A2", [["inside"]]);
+    if (newest) await host.writeLabels("Work!A4", [["inside too"]]);
+  });
+  expect(host.undoesAtOnce).toBe(newest);
   await host.writeLabels("Work!A3", [["after"]]);
   expect(fake.joined).toEqual(joined);
 });

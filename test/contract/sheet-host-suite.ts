@@ -25,6 +25,13 @@ export function sheetHostContract(name: string, open: () => Promise<HostUnderTes
       expect(await host.selectedAddress()).toBe("'Cold store'!C3");
     });
 
+    it("selects a region and brings its sheet in front", async () => {
+      await host.select("'Cold store'!B2:C9");
+      await settled(async () => expect(await host.selectedAddress()).toBe("'Cold store'!B2:C9"));
+      await host.select("Work!A1");
+      await settled(async () => expect(await host.selectedAddress()).toBe("Work!A1"));
+    });
+
     it("writes a formula that computes", async () => {
       await host.writeFormulas("Work!A1:B1", [["=1+2", "=20+22"]]);
       await settled(async () => expect(await host.readBlock("Work!A1:B1")).toEqual([[3, 42]]));
@@ -52,6 +59,27 @@ export function sheetHostContract(name: string, open: () => Promise<HostUnderTes
       );
     });
 
+    it("reads a whole column from its first row on", async () => {
+      await host.writeLabels("Work!M2", [["high"]]);
+      await host.writeLabels("Work!N5", [["deep"]]);
+      await settled(async () => {
+        const column = await host.readBlock("Work!M:N");
+        expect(column.slice(0, 5)).toEqual([
+          [null, null],
+          ["high", null],
+          [null, null],
+          [null, null],
+          [null, "deep"],
+        ]);
+        expect(
+          column
+            .slice(5)
+            .flat()
+            .every((cell) => cell === null),
+        ).toBe(true);
+      });
+    });
+
     it("reads a blank region as rows of blanks of its width", async () => {
       const block = await host.readBlock("Work!H30:J35");
       expect(block.length).toBeGreaterThan(0);
@@ -66,9 +94,17 @@ export function sheetHostContract(name: string, open: () => Promise<HostUnderTes
       expect(await host.contents("'Cold store'!F4:G8")).toEqual({ filled: 0, first: null });
     });
 
+    it("counts a formula that shows nothing: it is in the way all the same", async () => {
+      await host.writeFormulas("'Cold store'!G20", [['=""']]);
+      await settled(async () =>
+        expect(await host.contents("'Cold store'!F19:H21")).toEqual({ filled: 1, first: "G20" }),
+      );
+    });
+
     it("adds a sheet, under another name when the one asked for is taken", async () => {
       expect(await host.addSheet("Workings")).toBe("Workings");
       expect(await host.addSheet("workings")).toBe("workings 2");
+      expect(await host.selectedAddress()).toMatch(/^Work!/);
       await host.writeLabels("'workings 2'!A1", [["here"]]);
       await settled(async () => expect(await host.readBlock("'workings 2'!A1")).toEqual([["here"]]));
     });
@@ -81,14 +117,22 @@ export function sheetHostContract(name: string, open: () => Promise<HostUnderTes
       await settled(async () => expect(await host.readBlock("Work!B20")).toEqual([[42]]));
     });
 
+    it("moves a name that is already there", async () => {
+      await host.writeFormulas("Work!A21", [["=40+17"]]);
+      await settled(async () => expect(await host.readBlock("Work!A21")).toEqual([[57]]));
+      await host.nameRange("catch_total", "Work!A21");
+      await host.writeFormulas("Work!B21", [["=catch_total"]]);
+      await settled(async () => expect(await host.readBlock("Work!B21")).toEqual([[57]]));
+    });
+
     it("hears of a new selection until it stops listening", async () => {
       await select("Work!A1");
       let heard = 0;
       const stop = host.onSelectionChanged(() => void heard++);
-      // a host may need a moment until it listens, so the user goes on selecting
-      let row = 2;
+      // listening may begin a moment after it was asked for
       await settled(async () => {
-        await select(`Work!B${row++}`);
+        await select("Work!B2:C3");
+        await select("Work!A1");
         expect(heard).toBeGreaterThan(0);
       });
       await stop();

@@ -2,10 +2,11 @@ import { parseAddress, formatAddress, type Region } from "../../taskpane/address
 
 type Value = string | number | boolean;
 
-/** A cell as Excel keeps it: what was written, what it comes to, and of which type that is. */
+/** A cell as Excel keeps it: what it comes to, of which type that is, and its formula if it has one. */
 interface KeptCell {
   readonly value: Value;
   readonly type: string;
+  readonly formula?: string;
 }
 
 const BLANK: KeptCell = { value: "", type: "Empty" };
@@ -19,10 +20,16 @@ class KeptSheet {
   }
 }
 
-/** What a formula of the fake comes to: a sum of two numbers, a name, or an error written out. */
+/** A cell with a formula: a sum of two numbers, a name, a text of no length, or an error written out. */
+const computed = (formula: string, names: ReadonlyMap<string, () => Value>): KeptCell => ({
+  ...evaluate(formula, names),
+  formula,
+});
+
 function evaluate(formula: string, names: ReadonlyMap<string, () => Value>): KeptCell {
   const sum = /^=(\d+)\+(\d+)$/.exec(formula);
   if (sum) return { value: Number(sum[1]) + Number(sum[2]), type: "Double" };
+  if (formula === '=""') return { value: "", type: "String" };
   if (formula === "=NA()") return { value: "#N/A", type: "Error" };
   const named = names.get(formula.slice(1).toLowerCase());
   return named ? kept(named()) : { value: "#NAME?", type: "Error" };
@@ -90,17 +97,26 @@ class FakeRange extends Loadable {
     this.#write(rows, (value) => {
       if (typeof value !== "string") return kept(value);
       if (value.startsWith("'")) return kept(value.slice(1));
-      return value.startsWith("=") ? evaluate(value, this.book.names) : kept(value);
+      return value.startsWith("=") ? computed(value, this.book.names) : kept(value);
     });
   }
   get valueTypes(): string[][] {
     return this.read("valueTypes", () => this.#map(({ type }) => type));
   }
+  get formulas(): Value[][] {
+    return this.read("formulas", () => this.#map(({ formula, value }) => formula ?? value));
+  }
   set formulas(rows: string[][]) {
-    this.#write(rows, (formula) => evaluate(formula as string, this.book.names));
+    this.#write(rows, (formula) => computed(formula as string, this.book.names));
   }
   get worksheet() {
-    return { charts: { add: (kind: string, source: FakeRange) => this.book.chart(kind, source.region!) } };
+    return {
+      activate: () => undefined,
+      charts: { add: (kind: string, source: FakeRange) => this.book.chart(kind, source.region!) },
+    };
+  }
+  select(): void {
+    this.book.pending.push(() => this.book.choose(this.sheet, this.region!));
   }
   getCell(row: number, column: number): FakeRange {
     const { region } = this;
@@ -115,7 +131,7 @@ class FakeRange extends Loadable {
   getUsedRangeOrNullObject(): FakeRange {
     const { row, column, rows, columns } = this.region!;
     const used = [...this.sheet.cells.entries()]
-      .filter(([, cell]) => cell.value !== "")
+      .filter(([, cell]) => cell.value !== "" || cell.formula !== undefined)
       .map(([key]) => key.split(" ").map(Number))
       .filter(([r, c]) => r >= row && r < row + rows && c >= column && c < column + columns);
     if (used.length === 0) return new FakeRange(this.book, this.sheet, null);
@@ -186,8 +202,12 @@ export class FakeExcel {
   /** What the user does: selects a region. */
   async select(address: string): Promise<void> {
     const region = parseAddress(address)!;
-    this.#selected = { sheet: this.#named(region.sheet!), region };
-    for (const listener of this.#listeners) await listener();
+    this.choose(this.#named(region.sheet!), region);
+  }
+
+  choose(sheet: KeptSheet, region: Region): void {
+    this.#selected = { sheet, region };
+    for (const listener of this.#listeners) void listener();
   }
 
   chart(kind: string, source: Region) {
@@ -233,7 +253,16 @@ export class FakeExcel {
           getItem: (name: string) => range(this.#named(name)),
           getActiveWorksheet: () => range(this.#selected.sheet),
         },
-        names: { add: (name: string, target: FakeRange) => this.names.set(name.toLowerCase(), target.first) },
+        names: {
+          getItemOrNullObject: (name: string) => {
+            const key = name.toLowerCase();
+            return { isNullObject: !this.names.has(key), delete: () => this.names.delete(key) };
+          },
+          add: (name: string, target: FakeRange) => {
+            if (this.names.has(name.toLowerCase())) throw new Error(`ItemAlreadyExists: ${name}`);
+            this.names.set(name.toLowerCase(), target.first);
+          },
+        },
         onSelectionChanged: {
           add: (handler: () => Promise<void>) => {
             this.#listeners.add(handler);
