@@ -35,7 +35,8 @@ const PROGRAM_WORDS =
   /undefined|\bNaN\b|Infinity|\[object|TypeError|RangeError|Error:|\bat \w+\.|\bnull\b|stack|BigInt|Symbol/;
 const BUG_WORDS = "failed on something it should have handled";
 
-const SECONDS = 2;
+// two are promised; five leave room for a machine that is busy with the other tests
+const SECONDS = 5;
 
 const FITS = ["least-squares", "yule-walker", "nuttall-strand", "likelihood", "shrinkage"];
 const TERMS = ["constant", "none", "trend", "constant; cycle=4; waves=1; steps=diff"];

@@ -110,6 +110,14 @@ const examples: readonly IssueFacts[] = [
   { code: "unstable", modulus: 1.0213 },
   { code: "no-lags" },
   { code: "needs-two-series" },
+  { code: "too-many-looks", looks: 5000, limit: 1000 },
+  { code: "start-needed", modulus: 1.02 },
+  { code: "drivers-not-here", call: "SIMULATE" },
+  { code: "plan-rows", have: 12_000, limit: 10_000 },
+  { code: "plan-names", plan: ["price"], series: ["price", "orders"] },
+  { code: "plan-domain", step: "log", series: 0, ahead: 3, value: -2 },
+  { code: "plan-too-large", imposed: 4000 },
+  { code: "plan-singular" },
   { code: "too-large" },
   { code: "too-many-cells", cells: 300_030, limit: 250_000 },
 ];
@@ -188,8 +196,8 @@ describe("the two errors", () => {
   it("a refused argument is a value error, a result that does not exist is not available", () => {
     const codes = (kind: string) => new Set(examples.filter((f) => kindOf(f) === kind).map(({ code }) => code));
     expect([...codes("not-available")].sort()).toEqual([
-      "block-needs-rows", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags", "predicted-exactly",
-      "singular-system", "steps-leave-nothing", "too-few-rows", "too-large", "unstable",
+      "block-needs-rows", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags", "plan-singular",
+      "predicted-exactly", "singular-system", "start-needed", "steps-leave-nothing", "too-few-rows", "too-large", "unstable",
     ]);
     for (const code of ["gap", "covariance-asymmetric", "model-block", "bad-option"] as const) expect(codes("value")).toContain(code);
   }); // prettier-ignore
