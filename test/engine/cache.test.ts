@@ -71,7 +71,7 @@ describe("the engine", () => {
     const own = engine.fit({ sample, plan });
     const request = { sample, plan, horizon: 3, point: "median" } as const;
     engine.run("ahead", request);
-    engine.run("bands", { ...request, coverage: 0.9, joint: false, bands: "fitted" });
+    engine.run("bands", { ...request, coverage: 0.9, joint: false, bands: "fitted", draws: 1000, seed: 1 });
     const fits = get.mock.calls.filter(([content]) => content.startsWith("fit "));
     expect(fits.length).toBe(3);
     expect(new Set(fits.map(([content]) => content)).size).toBe(1);
