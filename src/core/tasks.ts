@@ -12,6 +12,7 @@ import { fitModel, settingsOf } from "./var/fit";
 import { estimates } from "./var/estimates";
 import { fittedLevels, residualRows } from "./var/one-step-levels";
 import { grangerPValues, holm } from "./diagnostics/granger";
+import { residualTests, type ResidualTestsRequest } from "./diagnostics/residual-tests";
 import { partialLags } from "./moments/partial-lag";
 import { leadsAndLags, type LeadLagRequest } from "./moments/lead-lag";
 import { impliedCovariances } from "./moments/implied-covariance";
@@ -70,6 +71,8 @@ export const tasks = {
     const p = grangerPValues(sample, settingsOf(sample, plan), spare);
     return adjust ? holm(p) : p;
   },
+  residualTests: ({ sample, plan, testLags }: ResidualTestsRequest, run: Runner) =>
+    residualTests(run.fit({ sample, plan }), sample, testLags),
   partialLag: ({ series, lags }: { readonly series: Matrix; readonly lags: number }) =>
     partialLags(series, lags),
   impliedCovariance: ({ model, lags }: { readonly model: VarModel; readonly lags: number }) =>

@@ -1,4 +1,5 @@
 import { answer } from "./answer";
+import { residtest } from "../sheet/calls/residtest";
 import { granger } from "../sheet/calls/granger";
 
 /**
@@ -13,4 +14,18 @@ import { granger } from "../sheet/calls/granger";
  */
 export function GRANGER(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
   return answer(granger, { series, model, options, drivers });
+}
+
+/**
+ * What the model leaves over, question by question: anything left to predict, changing spread, shape, a change in the equations, fit to use. Each row has a reading in words.
+ * @customfunction RESIDTEST
+ * @helpurl https://localhost:3000/help/index.html#RESIDTEST
+ * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
+ * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
+ * @param [options] Options as "key=value; key=value" or as two columns: testlags, fit, terms, cycle, waves, steps and more.
+ * @param [drivers] Outside series, one per column, beside the series.
+ * @returns {any[][]} One row per test.
+ */
+export function RESIDTEST(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
+  return answer(residtest, { series, model, options, drivers });
 }

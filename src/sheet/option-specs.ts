@@ -25,6 +25,7 @@ export interface OptionValues {
   readonly bands: "fitted" | "known";
   readonly joint: "no" | "yes";
   readonly point: Point;
+  readonly testlags: readonly number[];
   readonly adjust: "no" | "yes";
   readonly spare: number;
   readonly draws: number;
@@ -94,6 +95,14 @@ const lagList: OptionSpec<readonly number[]> = {
   },
 };
 
+const testLags: OptionSpec<readonly number[]> = {
+  allowed: { kind: "list", of: "test lags" },
+  parse: (text) => {
+    const lags = text.split(/[\s,]+/).map((word) => (/^\d{1,6}$/.test(word) ? Number(word) : 0));
+    return lags.length <= 3 && lags.every((lag) => lag >= 1) ? lags : undefined;
+  },
+};
+
 const stepLists: OptionSpec<StepPlan> = {
   allowed: { kind: "list", of: "steps" },
   parse: (text) => parseSteps(text) ?? undefined,
@@ -116,6 +125,7 @@ export const OPTIONS: { readonly [K in OptionKey]: OptionSpec<OptionValues[K]> }
   bands: choice("fitted", "known"),
   joint: choice("no", "yes"),
   point: choice("median", "mean"),
+  testlags: testLags,
   adjust: choice("no", "yes"),
   spare: whole(0, 1000),
   draws: whole(100, 100_000),

@@ -6,6 +6,9 @@ import { Issue } from "../issue";
  */
 const WORK_LIMIT = 1.4e8;
 
+/** Whether something worked out beside a fit would hold the page up too: several such may come together. */
+export const exceedsWork = (products: number): boolean => products > WORK_LIMIT / 5;
+
 /**
  * Refuses a fit that would hold the page up: the factor of T rows and q columns with K right-hand sides costs
  * about T·q·(q + K).

@@ -6,6 +6,8 @@ export const headings = {
   low: "low",
   high: "high",
   order: ["order", "log det", "AIC", "AICc", "BIC", "HQ", "FPE", "LR", "LR p-value", "chosen by"],
+  residTest: ["question", "about", "method", "lags", "statistic", "df", "df 2", "p-value", "reading"],
+  allSeries: "all series",
   estimates: ["equation", "regressor", "coefficient", "low", "high", "std error", "t", "p-value"],
   effect: "effect",
   statistic: "statistic",

@@ -1,3 +1,5 @@
+import type { Gap } from "../../core/diagnostics/figure";
+import type { ResidualTest } from "../../core/diagnostics/residual-tests";
 import type { Lead } from "../../core/moments/lead-lag";
 import type { Root } from "../../core/var/roots";
 
@@ -26,6 +28,91 @@ export function leadReading({ lag, correlation, p }: Lead, leader: string, follo
     return `${follower} ${verb("move", follower)} ${opposite ? "against" : "with"} ${leader} in the same row`;
   const rows = `${lag} ${lag === 1 ? "row" : "rows"}`;
   return `${follower} ${verb("follow", follower)} ${leader} by ${rows}${opposite ? ", with opposite sign" : ""}`;
+}
+
+/** What each part of the report on residuals asks. */
+export const residualQuestions: Readonly<Record<ResidualTest["question"], string>> = {
+  predict: "anything left to predict?",
+  spread: "does the spread change?",
+  shape: "is the shape normal?",
+  change: "did the equation change?",
+  use: "fit to use?",
+};
+
+export const residualMethods: Readonly<Record<ResidualTest["method"], string>> = {
+  portmanteau: "portmanteau",
+  "small-sample": "portmanteau, few rows",
+  lm: "Breusch–Godfrey LM",
+  f: "Edgerton–Shukur F",
+  "ljung-box": "Ljung–Box",
+  arch: "ARCH LM",
+  skewness: "skewness",
+  kurtosis: "kurtosis",
+  both: "skewness and kurtosis",
+  chow: "largest Chow Wald",
+  root: "largest root",
+  rows: "rows per coefficient",
+  conditioning: "conditioning",
+};
+
+const gapReadings: Readonly<Record<Gap, string>> = {
+  rows: "too few rows for this test",
+  lags: "no more lags than the model has: look further back",
+  exact: "no figure: some columns repeat others exactly",
+  heavy: "too large to work out here",
+  "no-lags": "no lags, nothing that lasts",
+  "no-coefficients": "no coefficients to judge",
+  untabulated: "more than 30 coefficients: no p-value known",
+};
+
+/** What one row of the report on residuals says; chance passes 5 % one time in twenty. */
+export function residualReading(test: ResidualTest): string {
+  const { figure } = test;
+  if (figure.gap !== null) return gapReadings[figure.gap];
+  if (test.question === "use") return useReading(test);
+  const { bound } = figure;
+  const found = figure.p === null ? bound?.side === "below" : figure.p < 0.05;
+  const reading = found ? foundReading(test) : quietReadings[test.question];
+  return bound === null ? reading : `${reading} (p ${bound.side} ${bound.p})`;
+}
+
+const quietReadings = {
+  predict: "nothing left that the lags could predict",
+  spread: "spread is steady",
+  shape: "nothing against a normal shape",
+  change: "no change in the equation",
+} as const;
+
+function foundReading({ method, heavyTails }: ResidualTest): string {
+  switch (method) {
+    case "arch":
+      return "spread changes with time: bands are too narrow at times, too wide at others";
+    case "skewness":
+      return "lopsided: bands may miss more on one side";
+    case "kurtosis":
+      return heavyTails
+        ? "tails heavier than normal: bands may be too narrow"
+        : "tails lighter than normal: bands may be too wide";
+    case "both":
+      return "not normal: bands may be off";
+    case "chow":
+      return "the equation changed: a shorter range, or a driver, may help";
+    default:
+      return "something is left: more lags, or steps, may help";
+  }
+}
+
+function useReading({ method, figure, root }: ResidualTest): string {
+  if (root !== null) return rootReading(root);
+  const value = figure.statistic!;
+  if (method === "rows") {
+    if (value < 3) return "fewer than 3 rows per coefficient: too many lags";
+    return value < 10 ? "rather few rows per coefficient" : "enough rows per coefficient";
+  }
+  if (value < 30) return "regressors well apart";
+  return value < 1000
+    ? "regressors overlap: single coefficients are uncertain"
+    : "regressors hardly apart: steps, or fewer terms, may help";
 }
 
 /** "trips follow", "price follows": names that end like a plural take the plural. */
