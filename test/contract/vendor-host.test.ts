@@ -84,8 +84,8 @@ describe("every function of functions.json", () => {
     expect(["number", "string", "boolean"]).toEqual(expect.arrayContaining(kindsIn(table)));
   });
 
-  it.each(cases)("$of reaches the cell as it was computed", ({ name, params, answer }) =>
-    expect(sheet(answer)).toEqual(wrappers.get(name)!(...params)),
+  it.each(cases)("$of reaches the cell as it was computed", async ({ name, params, answer }) =>
+    expect(sheet(answer)).toEqual(await wrappers.get(name)!(...params)),
   );
 
   it("says what is missing when every argument is left out", async () => {
@@ -189,5 +189,25 @@ describe("a special cell in the body", () => {
   it("a blank that an old host sends as 0 cannot be told from a zero", async () => {
     const [zero] = (await host.callAll([["STEPS", [withCell(0), "diff"]]])).map(sheet);
     close([[zero[21][0] as number]], [[-rows[19][0]]], { rtol: 1e-14 });
+  });
+});
+
+describe("a call that is taken back", () => {
+  const redrawn = "bands=redrawn; draws=20000";
+
+  it("is given up, and says so", async () => {
+    const before = performance.now();
+    const answer = await host.callAndCancel("BANDS", [series, 3, 1, redrawn, null]);
+    const message = "This calculation was given up because the formula or its inputs changed.";
+    expect(answer).toEqual({ ok: false, code: "#N/A", message });
+    // 20,000 draws would take seconds
+    expect(performance.now() - before).toBeLessThan(2000);
+  });
+
+  it("without being taken back it is answered in its time, the page staying alive", async () => {
+    const [table] = (
+      await host.callAll([["BANDS", [series, 3, 1, "bands=redrawn; draws=3000", null], "cancelable"]])
+    ).map(sheet);
+    expect(table).toEqual(await wrappers.get("BANDS")!(series, 3, 1, "bands=redrawn; draws=3000"));
   });
 });

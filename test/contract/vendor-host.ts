@@ -18,6 +18,8 @@ export interface VendorHost {
    * second, so calls made one after the other wait half a second each.
    */
   callAll(calls: readonly CallOf[]): Promise<Answer[]>;
+  /** A call that the spreadsheet takes back as soon as it is made. */
+  callAndCancel(...call: CallOf): Promise<Answer>;
 }
 
 export type CallOf = readonly [name: string, params: readonly unknown[], kind?: ParameterKind];
@@ -30,7 +32,7 @@ export type Answer =
  * How the host says that cells are more than numbers and text: "errors" when it knows only error cells,
  * "rich" when every special cell comes as an object with a type.
  */
-export type ParameterKind = "plain" | "errors" | "rich";
+export type ParameterKind = "plain" | "errors" | "rich" | "cancelable";
 
 /** An error cell in the two forms that hosts send. */
 export const errorCell = (code: string): unknown => ({ type: "CustomFunctionError", code });
@@ -38,7 +40,7 @@ export const richCell = (value: object): unknown => ({ value: JSON.stringify(val
 export const richError = (code: string): unknown =>
   richCell({ type: "Error", basicType: "Error", basicValue: code });
 
-const FLAGS: Readonly<Record<ParameterKind, number>> = { plain: 0, errors: 4, rich: 4 | 8 };
+const FLAGS: Readonly<Record<ParameterKind, number>> = { plain: 0, cancelable: 1, errors: 4, rich: 4 | 8 };
 
 /** The numbers that the library gives to errors on their way to the cell. */
 const CODES: Readonly<Record<number, string>> = {
@@ -50,6 +52,7 @@ const CODES: Readonly<Record<number, string>> = {
 };
 
 const INVOKE = 1000;
+const CANCEL = 1001;
 const LONGEST_WAIT = 20_000;
 
 const LIBRARY = createRequire(import.meta.url).resolve(
@@ -85,6 +88,11 @@ export function openVendorHost(bundle = BUILT_FUNCTIONS): VendorHost {
     registered,
     callAll,
     call: async (...call) => (await callAll([call]))[0],
+    callAndCancel: async (name, params) => {
+      const answers = callAll([[name, params, "cancelable"]]);
+      bridge.cancel(lastId);
+      return (await answers)[0];
+    },
   };
 }
 
@@ -118,6 +126,7 @@ interface Bridge {
   /** Set by the library. */
   onMessageFromHost(text: string): void;
   invoke(messages: readonly unknown[]): void;
+  cancel(invocationId: number): void;
 }
 
 /** The two ends that the library and the spreadsheet talk over. */
@@ -132,6 +141,10 @@ function openBridge(onResult: (result: Result) => void): Bridge {
     onMessageFromHost: () => undefined,
     invoke(messages) {
       const entries = messages.map((message) => [1, INVOKE, null, message, null]);
+      bridge.onMessageFromHost(JSON.stringify({ type: 3, message: { entries } }));
+    },
+    cancel(invocationId) {
+      const entries = [[1, CANCEL, null, { invocationId }, null]];
       bridge.onMessageFromHost(JSON.stringify({ type: 3, message: { entries } }));
     },
   };
@@ -166,6 +179,7 @@ function pageAround(bridge: Bridge): object {
     clearInterval,
     queueMicrotask,
     performance,
+    AbortController,
     URL,
     TextEncoder,
     TextDecoder,
