@@ -35,6 +35,8 @@ export default (env = {}, { mode = "production" } = {}) => {
     entry: {
       stub: "./src/embedded/office-stub.ts",
       functions: "./src/functions/register.ts",
+      // opened by functions.js from its own folder
+      worker: "./src/engine/worker.ts",
       // dependOn, not a shared runtime chunk: functions.js stays self-contained and the cache is one instance
       pane: { import: "./taskpane/main.ts", dependOn: "functions" },
       embedded: { import: "./src/embedded/page.ts", dependOn: "functions" },

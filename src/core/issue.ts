@@ -134,6 +134,11 @@ export type IssueFacts =
     }
   | { readonly code: "plan-too-large"; readonly imposed: number }
   | { readonly code: "plan-singular" }
+  | { readonly code: "cancelled" }
+  | { readonly code: "not-in-preview" }
+  | { readonly code: "redraws-fail"; readonly failed: number; readonly drawn: number }
+  | { readonly code: "redraw-fit"; readonly fit: string }
+  | { readonly code: "redraw-heavy"; readonly draws: number }
   | { readonly code: "too-large" }
   | { readonly code: "too-many-cells"; readonly cells: number; readonly limit: number };
 

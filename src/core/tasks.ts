@@ -91,4 +91,6 @@ export const tasks = {
 export type Tasks = typeof tasks;
 export type TaskName = keyof Tasks;
 export type RequestOf<N extends TaskName> = Parameters<Tasks[N]>[0];
-export type ResultOf<N extends TaskName> = ReturnType<Tasks[N]>;
+export type ResultOf<N extends TaskName> = Settled<ReturnType<Tasks[N]>>;
+/** What long work comes to: it may be written as a generator that yields wherever it can be paused or given up. */
+type Settled<T> = T extends Generator<unknown, infer R> ? R : T;

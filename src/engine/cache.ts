@@ -23,6 +23,10 @@ export class ContentCache {
     return value;
   }
 
+  has(content: string): boolean {
+    return this.#kept.has(content);
+  }
+
   get size(): number {
     return this.#size;
   }

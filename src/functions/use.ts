@@ -1,4 +1,4 @@
-import { answer } from "./answer";
+import { answer, answerLater } from "./answer";
 import { ahead } from "../sheet/calls/ahead";
 import { bands } from "../sheet/calls/bands";
 import { response } from "../sheet/calls/response";
@@ -35,9 +35,10 @@ export function AHEAD(
  * @param series Range of series, one per column, oldest row first; a header row of names is welcome.
  * @param horizon Rows to forecast, 1 to 10,000.
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
- * @param [options] Options as "key=value; key=value" or as two columns: coverage, bands, joint, point and more.
+ * @param [options] Options as "key=value; key=value" or as two columns: coverage, bands, joint, draws, seed, point and more.
  * @param [drivers] Outside series beside the series, with a row for every row ahead.
- * @returns {any[][]} Per series: low, forecast, high.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} Per series: low, forecast, high.
  */
 export function BANDS(
   series: any[][],
@@ -45,8 +46,9 @@ export function BANDS(
   model?: any[][],
   options?: any[][],
   drivers?: any[][],
-): any[][] {
-  return answer(bands, { series, horizon, model, options, drivers });
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(bands, { series, horizon, model, options, drivers }, invocation);
 }
 
 /**

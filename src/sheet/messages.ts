@@ -25,6 +25,9 @@ const NOT_AVAILABLE: ReadonlySet<IssueCode> = new Set<IssueCode>([
   "needs-two-series",
   "start-needed",
   "plan-singular",
+  "redraws-fail",
+  "cancelled",
+  "not-in-preview",
   "too-large",
 ]);
 

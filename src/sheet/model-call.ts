@@ -28,17 +28,28 @@ export const wordingOf = (series: SeriesBlock, drivers: readonly string[] = []):
  * Reads the arguments that every call with a model shares.
  * @param keys   the option keys of the call
  * @param future driver rows needed beyond the last row of the series
- * @param use    whether a block stands for its numbers or for its settings
+ * @param use    whether a block stands for its numbers or for its settings, if need be by the options
  */
 export function readModelCall(
   args: RawArguments,
-  { call, keys, future, use }: { call: string; keys: readonly OptionKey[]; future: number; use: BlockUse },
+  {
+    call,
+    keys,
+    future,
+    use,
+  }: {
+    call: string;
+    keys: readonly OptionKey[];
+    future: number;
+    use: BlockUse | ((options: Options) => BlockUse);
+  },
 ): ModelCall {
   const series = readSeries(args["series"]);
   const options = readOptions(args["options"], call, keys);
   const drivers = readDrivers(args["drivers"], series, future);
   const argument = readModelArgument(args["model"]);
-  const plan = planModel(argument, options, { series, drivers }, use);
+  const blockUse = typeof use === "function" ? use(options) : use;
+  const plan = planModel(argument, options, { series, drivers }, blockUse);
   return {
     series,
     drivers,

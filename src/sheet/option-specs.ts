@@ -1,6 +1,7 @@
 import type { Allowed } from "../core/issue";
 import type { Divisor } from "../core/moments/lag-covariance";
 import type { Point } from "../core/forecast/ahead";
+import type { BandsKind } from "../core/forecast/bands";
 import type { Shock } from "../core/forecast/responses";
 import { LARGEST_SEED } from "../core/random";
 import type { StepPlan } from "../core/prepare/steps";
@@ -22,7 +23,7 @@ export interface OptionValues {
   readonly criterion: Criterion;
   readonly maxorder: number;
   readonly coverage: number;
-  readonly bands: "fitted" | "known";
+  readonly bands: BandsKind;
   readonly joint: "no" | "yes";
   readonly point: Point;
   readonly testlags: readonly number[];
@@ -122,13 +123,13 @@ export const OPTIONS: { readonly [K in OptionKey]: OptionSpec<OptionValues[K]> }
   criterion: choice("aicc", "aic", "bic", "hq"),
   maxorder: whole(0, 10_000),
   coverage: between(0, 1),
-  bands: choice("fitted", "known"),
+  bands: choice("fitted", "known", "redrawn"),
   joint: choice("no", "yes"),
   point: choice("median", "mean"),
   testlags: testLags,
   adjust: choice("no", "yes"),
   spare: whole(0, 1000),
-  draws: whole(100, 100_000),
+  draws: whole(20, 100_000),
   seed: whole(0, LARGEST_SEED),
   shock: choice("orthogonal", "unit", "generalised"),
   divisor: choice("n", "n-k"),

@@ -110,14 +110,21 @@ const examples: readonly IssueFacts[] = [
   { code: "unstable", modulus: 1.0213 },
   { code: "no-lags" },
   { code: "needs-two-series" },
-  { code: "too-many-looks", looks: 5000, limit: 1000 },
-  { code: "start-needed", modulus: 1.02 },
+  { code: "too-many-looks", looks: 300_000, limit: 50_000 },
+  { code: "start-needed", modulus: 1.0213 },
   { code: "drivers-not-here", call: "SIMULATE" },
   { code: "plan-rows", have: 12_000, limit: 10_000 },
-  { code: "plan-names", plan: ["price"], series: ["price", "orders"] },
-  { code: "plan-domain", step: "log", series: 0, ahead: 3, value: -2 },
-  { code: "plan-too-large", imposed: 4000 },
+  { code: "plan-rows", have: 0, limit: 10_000 },
+  { code: "plan-names", plan: ["price", "stock", "orders"], series: ["price", "orders", "stock"] },
+  { code: "plan-domain", step: "log", series: 1, ahead: 3, value: -2 },
+  { code: "plan-domain", step: "sqrt", series: 0, ahead: 1, value: -2 },
+  { code: "plan-too-large", imposed: 3000 },
   { code: "plan-singular" },
+  { code: "redraws-fail", failed: 101, drawn: 320 },
+  { code: "redraw-fit", fit: "likelihood" },
+  { code: "redraw-heavy", draws: 100_000 },
+  { code: "cancelled" },
+  { code: "not-in-preview" },
   { code: "too-large" },
   { code: "too-many-cells", cells: 300_030, limit: 250_000 },
 ];
@@ -196,8 +203,9 @@ describe("the two errors", () => {
   it("a refused argument is a value error, a result that does not exist is not available", () => {
     const codes = (kind: string) => new Set(examples.filter((f) => kindOf(f) === kind).map(({ code }) => code));
     expect([...codes("not-available")].sort()).toEqual([
-      "block-needs-rows", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags", "plan-singular",
-      "predicted-exactly", "singular-system", "start-needed", "steps-leave-nothing", "too-few-rows", "too-large", "unstable",
+      "block-needs-rows", "cancelled", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags",
+      "not-in-preview", "plan-singular", "predicted-exactly", "redraws-fail", "singular-system", "start-needed", "steps-leave-nothing",
+      "too-few-rows", "too-large", "unstable",
     ]);
     for (const code of ["gap", "covariance-asymmetric", "model-block", "bad-option"] as const) expect(codes("value")).toContain(code);
   }); // prettier-ignore

@@ -4,18 +4,25 @@ import { integratePath } from "../prepare/steps";
 import { coefficientRoots } from "../var/coefficient-covariance";
 import { fitModel } from "../var/fit";
 import type { VarModel } from "../var/model";
-import type { ModelRequest } from "../var/sample";
+import type { ModelPlan, ModelRequest } from "../var/sample";
+import { Issue } from "../issue";
 import { stepSample, type SteppedSample } from "../var/stepped";
 import { requireFinite } from "./finite";
 import { toMean, toMedian, type AheadRequest } from "./ahead";
 import { coefficientVariances, pathDeviations } from "./deviations";
 import { forecastPath } from "./path";
+import { redrawnBands } from "./redrawn-bands";
+
+/** Coefficients taken as known, their sampling error included, or the whole of it redrawn from the residuals. */
+export type BandsKind = "known" | "fitted" | "redrawn";
 
 export interface BandsRequest extends AheadRequest {
   readonly coverage: number;
   readonly joint: boolean;
-  /** Coefficients taken as known, or their sampling error included. */
-  readonly bands: "known" | "fitted";
+  readonly bands: BandsKind;
+  /** Samples drawn and the seed of the draws, for redrawn bands. */
+  readonly draws: number;
+  readonly seed: number;
 }
 
 /** A forecast with its limits, each h×K in original units. */
@@ -32,9 +39,11 @@ export interface Bands {
 export function forecastBands(
   request: BandsRequest,
   fit: (request: ModelRequest) => VarModel = fitModel,
-): Bands {
+): Bands | Generator<undefined, Bands> {
   const { sample, plan, horizon, coverage, joint } = request;
+  if (request.bands === "redrawn") refuseSlowRedraw(plan);
   const model = fit({ sample, plan });
+  if (request.bands === "redrawn") return redrawnBands(model, request);
   const { steps } = model.settings;
   const stepped = stepSample(sample, steps);
   const { forecast, regressors } = forecastPath(model, stepped, horizon);
@@ -55,6 +64,13 @@ export function forecastBands(
     point: request.point === "mean" ? toMean(level, known, steps) : toMedian(level, steps),
     high: limit(1),
   };
+}
+
+/** @throws Issue "redraw-fit" where fitting once is slow already */
+function refuseSlowRedraw(plan: ModelPlan): void {
+  const { fit } =
+    plan.kind === "fit" ? plan.settings : plan.kind === "auto" ? plan.shape : plan.model.settings;
+  if (fit === "likelihood") throw new Issue({ code: "redraw-fit", fit });
 }
 
 /** Adds the coefficients' sampling error, its regressors Z taken from the range at hand. */

@@ -56,7 +56,7 @@ export function fitSettings(sample: Sample, settings: ModelSettings): VarModel {
   };
 }
 
-function estimate(stepped: SteppedSample, settings: ModelSettings): Estimate {
+export function estimate(stepped: SteppedSample, settings: ModelSettings): Estimate {
   const rows = stepped.y.length;
   const q = regressorCount(settings, stepped.y[0].length, stepped.drivers[0]?.length ?? 0);
   switch (settings.fit) {

@@ -1,3 +1,4 @@
+import { Issue } from "../../core/issue";
 import { headings } from "../../texts/en";
 import { defineCall } from "../call";
 import { readModelCall } from "../model-call";
@@ -12,10 +13,15 @@ export const bands = defineCall({
     const horizon = readHorizon(args["horizon"]);
     const { request, series, options, wording } = readModelCall(args, {
       call: "BANDS",
-      keys: [...MODEL_KEYS, "coverage", "bands", "joint", "point", "labels"],
+      keys: [...MODEL_KEYS, "coverage", "bands", "joint", "point", "draws", "seed", "labels"],
       future: horizon,
-      use: "numbers",
+      // what is redrawn is fitted anew, so a block's numbers cannot stand
+      use: ({ bands }) => (bands === "redrawn" ? "settings" : "numbers"),
     });
+    for (const key of ["draws", "seed"] as const) {
+      if (options[key] !== undefined && options.bands !== "redrawn")
+        throw new Issue({ code: "option-needs", key, needs: "bands=redrawn" });
+    }
     requireCells(horizon + 1, 3 * series.names.length);
     return {
       request: {
@@ -25,6 +31,8 @@ export const bands = defineCall({
         coverage: options.coverage ?? 0.95,
         joint: options.joint === "yes",
         bands: options.bands ?? "fitted",
+        draws: options.draws ?? 1000,
+        seed: options.seed ?? 1,
       },
       layout: wantsLabels(options, series) ? series.names : null,
       wording,

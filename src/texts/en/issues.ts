@@ -192,6 +192,15 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `The plan imposes ${plural(imposed, "cell")}, too many so far ahead to weigh against each other. Impose fewer cells, or plan fewer rows.`,
   "plan-singular": () =>
     "The imposed cells cannot be told apart: under this model some follow from the others. Leave some of them blank, or look at the largest root with ROOTS.",
+  cancelled: () => "This calculation was given up because the formula or its inputs changed.",
+  "not-in-preview": () =>
+    "This takes a moment, so the preview leaves it out. Press Enter to calculate it in the sheet.",
+  "redraws-fail": ({ failed, drawn }) =>
+    `${grouped(failed)} of ${grouped(failed + drawn)} redrawn samples could not be fitted: the model is too large for so few rows. Use fewer lags, more rows, or bands=fitted.`,
+  "redraw-fit": ({ fit }) =>
+    `bands=redrawn fits the model anew to every draw, which fit=${fit} is too slow for. Use bands=fitted, or another fit.`,
+  "redraw-heavy": ({ draws }) =>
+    `${grouped(draws)} draws of this size would take minutes. Use fewer draws, fewer lags or series, or a shorter horizon.`,
   "needs-two-series": () => "One series alone has no other to be led by. Point at two or more.",
   "too-large": () =>
     "Some numbers run beyond what a sheet can hold. Divide the series by a power of ten; if a long forecast explodes, look at the largest root with ROOTS.",
