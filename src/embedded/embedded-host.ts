@@ -7,8 +7,8 @@ import { onSelectionMoved } from "./selection-moves";
 import { cellReader, rawValue, type Worksheet } from "./sheet-cells";
 import type { Grid } from "./workbook";
 
-const ROWS = 400;
-const COLUMNS = 40;
+const ROWS = 2000;
+const COLUMNS = 60;
 
 /** Rows and columns kept in sight before a selection that is scrolled to. */
 const MARGIN = 3;

@@ -15,8 +15,8 @@ export interface HostSurroundings {
   blankAs: BlankAs;
 }
 
-/** The invocation object that the platform passes last. */
-const INVOCATION = { isInValuePreview: false, onCanceled: () => undefined };
+/** The invocation object that the platform passes last; a function may leave its own answer to a cancellation in it. */
+const invocation = () => ({ isInValuePreview: false, onCanceled: () => undefined });
 
 /**
  * Makes the engine's function class for one of our functions: arguments go in as the platform would pass them, results
@@ -48,7 +48,7 @@ export function hostFunctionClass(
         return faultValue(thrown);
       };
       try {
-        const result = fn(...args, INVOCATION);
+        const result = fn(...args, invocation());
         around.faults.clear(place);
         if (!(result instanceof Promise)) return fromPlatform(result);
         return new AsyncObject(result.then(fromPlatform, failed) as never) as unknown as FunctionVariantType;
@@ -64,6 +64,7 @@ function argument(variant: FunctionVariantType, blankAs: BlankAs): unknown {
     return toPlatform(variant as BaseValueObject, blankAs);
   const range = variant as unknown as {
     getRangePosition(): { startRow: number; endRow: number; startColumn: number; endColumn: number };
+    getCellData?(row: number, column: number): { v?: unknown } | null | undefined;
     iterator(visit: (value: BaseValueObject | null, row: number, column: number) => void): void;
   };
   const { startRow, endRow, startColumn, endColumn } = range.getRangePosition();
@@ -72,7 +73,9 @@ function argument(variant: FunctionVariantType, blankAs: BlankAs): unknown {
     new Array<unknown>(endColumn - startColumn + 1).fill(blank),
   );
   range.iterator((value, row, column) => {
-    cells[row - startRow][column - startColumn] = toPlatform(value, blankAs);
+    // the engine takes a result's text of no length for a blank; the platform does not
+    const isText = value === null && range.getCellData?.(row, column)?.v === "";
+    cells[row - startRow][column - startColumn] = isText ? "" : toPlatform(value, blankAs);
   });
   return cells;
 }

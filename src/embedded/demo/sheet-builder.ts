@@ -100,8 +100,8 @@ export class SheetBuilder {
     return {
       id: this.id,
       name: this.name,
-      rowCount: 400,
-      columnCount: 40,
+      rowCount: 2000,
+      columnCount: 60,
       defaultColumnWidth: 88,
       defaultRowHeight: 24,
       columnData: this.#widths,
