@@ -115,7 +115,12 @@ describe("the embedded sheet", () => {
     await sheet.type("Data", "G34", "=COMOVE.AH", { enter: false });
     await sheet.page.getByText("COMOVE.AHEAD", { exact: true }).first().waitFor({ state: "visible" });
     await sheet.page.keyboard.type("EAD(");
-    await sheet.page.getByText("Rows to forecast, 1 to 10,000.").first().waitFor({ state: "visible" });
+    const help = (words: string) => sheet.page.getByText(words).first().waitFor({ state: "visible" });
+    await help("Forecasts all series together, in original units");
+    await help("Range of series, one per column");
+    expect(await sheet.page.getByText("Rows to forecast, 1 to 10,000.").first().isVisible()).toBe(false);
+    await sheet.page.keyboard.type("B4:E160,");
+    await help("Rows to forecast, 1 to 10,000.");
     await sheet.page.waitForTimeout(400);
     await sheet.shot("typing");
     await sheet.page.keyboard.press("Escape");
@@ -134,6 +139,16 @@ describe("the embedded sheet", () => {
     expect(v as number).toBeCloseTo(8.56, 10);
     await sheet.page.getByLabel("nothing", { exact: true }).check();
     await sheet.until("Data!AH4", ([[value]]) => isError(value, "#VALUE!"));
+  });
+
+  it("hands over a text of no length as text, never as 0: what STEPS leaves blank stays blank", async () => {
+    await sheet.type("Data", "AP4", '=COMOVE.STEPS(B4:B24,"diff")');
+    await sheet.type("Data", "AR4", "=COMOVE.LAGCOV(AP4#,0)");
+    const [[value]] = await sheet.until("Data!AT5", ([[v]]) => typeof v === "number");
+    await sheet.page.getByLabel("0, as on some older clients").check();
+    await sheet.page.waitForTimeout(500);
+    expect((await sheet.read("Data!AT5"))[0][0]).toBe(value);
+    await sheet.page.getByLabel("nothing", { exact: true }).check();
   });
 
   it("shows spilled numbers without a format at equal decimals and keeps all digits in the cells", async () => {

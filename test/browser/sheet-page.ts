@@ -8,6 +8,7 @@ type RawCell = number | string | boolean | null | { readonly type: "Error"; read
 declare const comovePage: {
   host: {
     readBlock(address: string): Promise<RawCell[][]>;
+    select(address: string): Promise<void>;
     writeFormulas(address: string, formulas: string[][]): Promise<void>;
     writeLabels(address: string, labels: string[][]): Promise<void>;
   };
@@ -91,25 +92,34 @@ export class SheetPage {
     );
   }
 
-  /** Selects cells of a sheet, as a click and a drag would. */
+  /** Selects cells of a sheet; the keyboard goes there, as after a click. */
   async select(sheet: string, a1: string): Promise<void> {
-    await this.page.evaluate(
-      ([name, cells]) => {
-        const book = comovePage.grid.api.getActiveWorkbook();
-        const target = book.getSheetByName(name);
-        book.setActiveSheet(target);
-        target.getRange(cells).activate();
-      },
-      [sheet, a1],
-    );
+    await this.page.evaluate((address) => comovePage.host.select(address), `'${sheet}'!${a1}`);
     await this.page.waitForTimeout(150);
   }
 
   /** Selects a cell and types into it, key by key. */
   async type(sheet: string, a1: string, text: string, { enter = true } = {}): Promise<void> {
+    await this.editing(false);
     await this.select(sheet, a1);
-    await this.page.keyboard.type(text);
-    if (enter) await this.page.keyboard.press("Enter");
+    // the grid needs a moment to open its editor: the first key opens it, the others go in
+    await this.page.keyboard.type(text[0]);
+    await this.editing(true);
+    await this.page.keyboard.type(text.slice(1));
+    if (!enter) return;
+    // while names are suggested, Enter takes the one suggested
+    await this.page.locator('ul[data-u-comp="sheets-formula-editor"]').waitFor({ state: "hidden" });
+    await this.page.keyboard.press("Enter");
+    await this.editing(false);
+  }
+
+  /** Waits until a cell is being edited, or none is any more. */
+  private async editing(wanted: boolean): Promise<void> {
+    await this.page.waitForFunction(
+      (now) => comovePage.grid.api.getActiveWorkbook().isCellEditing() === now,
+      wanted,
+      { timeout: 10_000 },
+    );
   }
 
   async clear(sheet: string, a1: string): Promise<void> {
