@@ -58,7 +58,7 @@ export const residualMethods: Readonly<Record<ResidualTest["method"], string>> =
 const gapReadings: Readonly<Record<Gap, string>> = {
   rows: "too few rows for this test",
   lags: "no more lags than the model has: look further back",
-  exact: "no figure: some columns repeat others exactly",
+  exact: "no figure: nothing is left, or some columns repeat others",
   heavy: "too large to work out here",
   "no-lags": "no lags, nothing that lasts",
   "no-coefficients": "no coefficients to judge",
