@@ -4,8 +4,11 @@
  * before the first run; the test is whether the designs called `promised` come out between 88 and 92 of 100.
  */
 import { writeFileSync } from "node:fs";
-import { forecastBands, type BandsKind, type BandsRequest } from "../../src/core/forecast/bands";
-import { atOnce, isLongWork } from "../../src/engine/slices";
+import { forecastBands, type Bands, type BandsKind, type BandsRequest } from "../../src/core/forecast/bands";
+import { forecastPath } from "../../src/core/forecast/path";
+import { redrawnPaths } from "../../src/core/forecast/redraw";
+import { cellLimits, jointLimits, type Limits } from "../../src/core/forecast/redrawn-bands";
+import { stepSample } from "../../src/core/var/stepped";
 import { innovationRoot } from "../../src/core/var/innovation-root";
 import type { Matrix } from "../../src/core/matrix";
 import { randomSource, type RandomSource } from "../../src/core/random";
@@ -29,7 +32,7 @@ interface Design {
   readonly shape: "normal" | "exponential";
 }
 
-/** Two series, two lags, a constant; largest root 0.78, innovations correlated at 0.5. */
+/** Two series, two lags, a constant; largest root 0.82, innovations correlated at 0.5. */
 const moderate = modelWith(
   [[[0.5, 0.2], [0.1, 0.4]], [[0.1, 0], [0.15, 0.1]]],
   [[1, 1], [1, 4]],
@@ -74,7 +77,20 @@ function invented({ model, rows, shape }: Design, seed: number): number[][] {
   return y.slice(BURN_IN);
 }
 
-const holds = (low: Matrix, high: Matrix, came: Matrix) =>
+/** Limits cell by cell and joint ones; redrawn, both from the same paths, as they are for the same seed. */
+function limitsOf(request: BandsRequest): readonly [Limits, Limits] {
+  if (request.bands !== "redrawn") {
+    const at = (joint: boolean) => forecastBands({ ...request, joint }) as Bands;
+    return [at(false), at(true)];
+  }
+  const model = fitModel(request);
+  const stepped = stepSample(request.sample, model.settings.steps);
+  const paths = [...redrawnPaths(model, stepped, request)];
+  const level = forecastPath(model, stepped, HORIZON).forecast;
+  return [cellLimits(paths, COVERAGE), jointLimits(paths, level, COVERAGE)];
+}
+
+const holds = ({ low, high }: Limits, came: Matrix) =>
   came.map((row, j) => row.map((v, k) => v >= low[j][k] && v <= high[j][k]));
 
 interface Count {
@@ -99,14 +115,9 @@ function count(design: Design, bands: BandsKind, at: number): Count {
       seed: 1 + i,
     };
     const came = whole.slice(design.rows);
-    const limits = (joint: boolean) => {
-      const work = forecastBands({ ...request, joint }, fitModel);
-      return isLongWork(work) ? atOnce(work) : work;
-    };
-    const { low, high } = limits(false);
-    holds(low, high, came).forEach((row, j) => (total.inside[j] += row.filter(Boolean).length));
-    const joint = limits(true);
-    if (holds(joint.low, joint.high, came).every((row) => row.every(Boolean))) total.whole++;
+    const [single, joint] = limitsOf(request);
+    holds(single, came).forEach((row, j) => (total.inside[j] += row.filter(Boolean).length));
+    if (holds(joint, came).every((row) => row.every(Boolean))) total.whole++;
   }
   return total;
 }

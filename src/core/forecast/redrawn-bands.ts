@@ -50,12 +50,13 @@ function requireRedraws(model: VarModel, rows: number, { draws, horizon }: Bands
     throw new Issue({ code: "redraw-heavy", draws });
 }
 
-interface Limits {
+export interface Limits {
   readonly low: Matrix;
   readonly high: Matrix;
 }
 
-function cellLimits(paths: readonly Matrix[], coverage: number): Limits {
+/** Limits that hold the share `coverage` of the paths, cell by cell. */
+export function cellLimits(paths: readonly Matrix[], coverage: number): Limits {
   const sorted = paths[0].map((row, j) =>
     row.map((_, k) => Float64Array.from(paths, (path) => path[j][k]).sort()),
   );
@@ -63,7 +64,8 @@ function cellLimits(paths: readonly Matrix[], coverage: number): Limits {
   return { low: limit((1 - coverage) / 2), high: limit((1 + coverage) / 2) };
 }
 
-function jointLimits(paths: readonly Matrix[], level: Matrix, coverage: number): Limits {
+/** Limits that hold the share `coverage` of whole paths. */
+export function jointLimits(paths: readonly Matrix[], level: Matrix, coverage: number): Limits {
   const deviations = level.map((row, j) =>
     row.map((centre, k) =>
       Math.sqrt(paths.reduce((sum, path) => sum + (path[j][k] - centre) ** 2, 0) / paths.length),
