@@ -1,35 +1,113 @@
 import { readFileSync } from "node:fs";
+import { fileURLToPath } from "node:url";
 import CopyPlugin from "copy-webpack-plugin";
 import { EsbuildPlugin } from "esbuild-loader";
 import HtmlPlugin from "html-webpack-plugin";
 import MiniCssExtractPlugin from "mini-css-extract-plugin";
 import webpack from "webpack";
 import { helpPage } from "./src/assets/help/build-help.mjs";
-import { buildMetadata } from "./src/cli/metadata.mjs";
+import { licences } from "./src/cli/licences.mjs";
+import { buildMetadata, DEVELOPMENT_URL } from "./src/cli/metadata.mjs";
 
-const DEVELOPMENT_URL = "https://localhost:3000/";
 const VENDOR_SCRIPT = "https://appsforoffice.microsoft.com/lib/1/hosted/office.js";
 const { version } = JSON.parse(readFileSync(new URL("package.json", import.meta.url), "utf8"));
 
+/**
+ * Adds made files to a build. What goes wrong while they are made is an error of the build, told in its words.
+ * @param {import("webpack").Compilation} compilation
+ * @param {() => Record<string, string> | Promise<Record<string, string>>} make  texts by file name
+ */
+function emitMade(compilation, make) {
+  const stage = webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL;
+  compilation.hooks.processAssets.tapPromise({ name: "Made", stage }, async () => {
+    try {
+      for (const [name, text] of Object.entries(await make())) {
+        compilation.emitAsset(name, new webpack.sources.RawSource(text));
+      }
+    } catch (fault) {
+      compilation.errors.push(
+        new webpack.WebpackError(fault instanceof Error ? fault.message : String(fault)),
+      );
+    }
+  });
+}
+
 /** Emits functions.json and the help page, both made from the comments of the sheet functions. */
 class ContractPlugin {
+  /** @param {import("webpack").Compiler} compiler */
   apply(compiler) {
-    compiler.hooks.thisCompilation.tap("Contract", (compilation) => {
-      const stage = webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL;
-      compilation.hooks.processAssets.tapPromise({ name: "Contract", stage }, async () => {
+    compiler.hooks.thisCompilation.tap("Contract", (compilation) =>
+      emitMade(compilation, async () => {
         const metadata = await buildMetadata({ baseUrl: DEVELOPMENT_URL });
-        const { RawSource } = webpack.sources;
-        compilation.emitAsset("functions.json", new RawSource(`${JSON.stringify(metadata, null, 1)}\n`));
-        compilation.emitAsset("help/index.html", new RawSource(helpPage(metadata)));
+        return {
+          "functions.json": `${JSON.stringify(metadata, null, 1)}\n`,
+          "help/index.html": helpPage(metadata),
+        };
+      }),
+    );
+  }
+}
+
+/** Emits licences.txt for everything that ends up in the scripts. */
+class LicencesPlugin {
+  /** @param {import("webpack").Compiler} compiler */
+  apply(compiler) {
+    compiler.hooks.thisCompilation.tap("Licences", (compilation) => {
+      /** @type {string[]} */
+      let files = [];
+      compilation.hooks.finishModules.tap("Licences", (modules) => {
+        files = [...modules].flatMap((module) => module.nameForCondition() ?? []);
       });
+      emitMade(compilation, () => ({ "licences.txt": licences(files) }));
     });
   }
 }
 
+/**
+ * The vendor's library for closed networks, each file as it is. It picks by itself what the host at hand needs; only
+ * what is for other programs or for debugging stays away.
+ */
+const VENDOR_PACKAGE = "node_modules/@microsoft/office-js";
+const vendorFiles = [
+  {
+    context: `${VENDOR_PACKAGE}/dist`,
+    from: "**/*",
+    to: "office/",
+    info: { minimized: true },
+    globOptions: {
+      ignore: [
+        "**/*.debug*.js",
+        "**/*.d.ts",
+        "**/*vsdoc.js",
+        "**/{access,onenote,outlook,powerpoint,project,word}*.js",
+      ],
+    },
+  },
+  { from: `${VENDOR_PACKAGE}/LICENSE.md`, to: "office/LICENSE.md" },
+];
+
+/**
+ * The grid can break words of seventy languages at the end of a line and brings the patterns for it, five megabytes.
+ * Cells never ask for them, so none is built in.
+ */
+const withoutWordBreaks = new webpack.NormalModuleReplacementPlugin(
+  /^\.\/[a-z][a-z\d-]*-[\w-]{8}\.js$/,
+  (request) => {
+    if (/@univerjs[\\/]engine-render[\\/]/.test(request.context))
+      request.request = "data:text/javascript,export {}";
+  },
+);
+
+/**
+ * @param {{ selfHosted?: boolean }} [env]
+ * @param {{ mode?: "production" | "development" }} [argv]
+ * @returns {import("webpack").Configuration}
+ */
 export default (env = {}, { mode = "production" } = {}) => {
   const selfHosted = Boolean(env.selfHosted);
   return {
     mode,
+    context: fileURLToPath(new URL(".", import.meta.url)),
     // evaluated strings are what the embedded page's content security policy forbids
     devtool: mode === "production" ? false : "source-map",
     entry: {
@@ -42,13 +120,16 @@ export default (env = {}, { mode = "production" } = {}) => {
       embedded: { import: "./src/embedded/page.ts", dependOn: "functions" },
     },
     output: {
-      path: new URL("dist", import.meta.url).pathname,
+      path: fileURLToPath(new URL("dist", import.meta.url)),
       filename: "[name].js",
-      chunkFilename: "grid/[name].js",
       clean: true,
     },
     resolve: { extensions: [".ts", ".js"] },
+    // webpack's own way to the global object evaluates a string where it knows no other
+    node: { global: false },
     module: {
+      // every page is the scripts that it names and no more
+      parser: { javascript: { dynamicImportMode: "eager" } },
       rules: [
         { test: /\.ts$/, loader: "esbuild-loader", options: { target: "es2022" } },
         { test: /\.css$/, use: [MiniCssExtractPlugin.loader, "css-loader"] },
@@ -56,11 +137,12 @@ export default (env = {}, { mode = "production" } = {}) => {
     },
     optimization: {
       // webpack's own minifier takes more than a minute on the grid
-      minimizer: [new EsbuildPlugin({ target: "es2022", css: true })],
+      minimizer: [new EsbuildPlugin({ target: "es2022", css: true, legalComments: "eof" })],
     },
     performance: { hints: false },
     plugins: [
-      new webpack.DefinePlugin({ COMOVE_VERSION: JSON.stringify(version) }),
+      withoutWordBreaks,
+      new webpack.DefinePlugin({ COMOVE_VERSION: JSON.stringify(version), global: "globalThis" }),
       new MiniCssExtractPlugin({ filename: "[name].css" }),
       new HtmlPlugin({
         template: "./src/embedded/index.html",
@@ -82,12 +164,11 @@ export default (env = {}, { mode = "production" } = {}) => {
         patterns: [
           { from: "src/assets/*.png", to: "assets/[name][ext]" },
           { from: "manifest.xml" },
-          ...(selfHosted
-            ? [{ from: "node_modules/@microsoft/office-js/dist", to: "office", info: { minimized: true } }]
-            : []),
+          ...(selfHosted ? vendorFiles : []),
         ],
       }),
       new ContractPlugin(),
+      new LicencesPlugin(),
     ],
     stats: "errors-warnings",
   };

@@ -9,6 +9,10 @@ import { homedir } from "node:os";
 import { join } from "node:path";
 import { answerFromDist } from "./static-site.mjs";
 
+/**
+ * @param {string} command
+ * @param {string[]} args
+ */
 const run = (command, ...args) => {
   const { status } = spawnSync(command, args, { stdio: "inherit", shell: process.platform === "win32" });
   if (status !== 0) process.exit(status ?? 1);

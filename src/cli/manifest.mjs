@@ -39,7 +39,10 @@ export function folderUrl(text) {
   return url.href.endsWith("/") ? url.href : `${url.href}/`;
 }
 
-/** Only what is written out in full counts: the parser would also mend "https:host". */
+/**
+ * Only what is written out in full counts: the parser would also mend "https:host".
+ * @param {string} text
+ */
 function parsed(text) {
   if (!/^[a-z][a-z\d+.-]*:\/\/[^/\s]+\S*$/i.test(text)) return null;
   return URL.canParse(text) ? new URL(text) : null;
@@ -90,6 +93,7 @@ export async function writeManifest(args, dist) {
   ].join("\n");
 }
 
+/** @param {readonly string[]} args */
 function urlAmong(args) {
   try {
     return parseArgs({ args: [...args], options: { url: { type: "string" } } }).values.url;

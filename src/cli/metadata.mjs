@@ -10,7 +10,8 @@ const ROOT = fileURLToPath(new URL("../../", import.meta.url));
 const FUNCTIONS = fileURLToPath(new URL("../functions/", import.meta.url));
 
 /**
- * @typedef {import("custom-functions-metadata").ICustomFunctionsMetadata & { allowErrorForDataTypeAny: true }} Metadata
+ * @typedef {import("custom-functions-metadata").ICustomFunctionsMetadata} Generated
+ * @typedef {Pick<Generated, "functions"> & { allowErrorForDataTypeAny: true }} Metadata
  */
 
 /**
@@ -24,7 +25,9 @@ const FUNCTIONS = fileURLToPath(new URL("../functions/", import.meta.url));
 export async function buildMetadata({ baseUrl, sources = FUNCTIONS }) {
   const files = wrapperFiles(sources);
   const { metadataJson, errors } = await generator.generateCustomFunctionsMetadata(files);
-  const { functions = [], ...rest } = metadataJson === "" ? {} : JSON.parse(metadataJson);
+  const { functions = [], ...rest } = /** @type {Partial<Generated>} */ (
+    metadataJson === "" ? {} : JSON.parse(metadataJson)
+  );
   const ids = functions.map(({ id }) => id);
   refuse([...errors, ...repeated(ids), ...skipped(files, ids)]);
   return {
@@ -35,7 +38,10 @@ export async function buildMetadata({ baseUrl, sources = FUNCTIONS }) {
   };
 }
 
-/** The sources that declare sheet functions, in the order of their names. */
+/**
+ * The sources that declare sheet functions, in the order of their names.
+ * @param {string} folder
+ */
 function wrapperFiles(folder) {
   return readdirSync(folder)
     .filter((name) => name.endsWith(".ts"))
@@ -44,13 +50,20 @@ function wrapperFiles(folder) {
     .filter((file) => readFileSync(file, "utf8").includes("@customfunction"));
 }
 
-/** The generator lets one id stand in two files. */
+/**
+ * The generator lets one id stand in two files.
+ * @param {readonly string[]} ids
+ */
 function repeated(ids) {
   const again = ids.filter((id, i) => ids.indexOf(id) !== i);
   return [...new Set(again)].map((id) => `The id ${id} is declared more than once.`);
 }
 
-/** The generator passes silently over anything that is not a top-level function declaration. */
+/**
+ * The generator passes silently over anything that is not a top-level function declaration.
+ * @param {readonly string[]} files
+ * @param {readonly string[]} ids
+ */
 function skipped(files, ids) {
   return files.flatMap((file) =>
     [...readFileSync(file, "utf8").matchAll(/@customfunction[ \t]+([\w.]+)/gi)]
@@ -60,11 +73,16 @@ function skipped(files, ids) {
   );
 }
 
+/** @param {readonly string[]} faults */
 function refuse(faults) {
   if (faults.length > 0) throw new Error(`functions.json cannot be made:\n- ${faults.join("\n- ")}`);
 }
 
-/** The address of help has to be absolute, so it moves with the place that serves the add-in. */
+/**
+ * The address of help has to be absolute, so it moves with the place that serves the add-in.
+ * @param {{ helpUrl?: string }} entry
+ * @param {string} baseUrl
+ */
 function movedHelp({ helpUrl }, baseUrl) {
   if (!helpUrl?.startsWith(DEVELOPMENT_URL)) return {};
   return { helpUrl: baseUrl + helpUrl.slice(DEVELOPMENT_URL.length) };

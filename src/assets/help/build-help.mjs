@@ -2,8 +2,13 @@ import { introduction, examples } from "./introduction.mjs";
 import { style } from "./style.mjs";
 
 /**
+ * @typedef {{ name: string, description?: string, optional?: boolean }} Parameter
+ * @typedef {{ id: string, description?: string, parameters: Parameter[] }} SheetFunction
+ */
+
+/**
  * The help page: a hand-written introduction, then one section per function made from functions.json.
- * @param {{ functions: { id: string, description: string, parameters: { name: string, description: string, optional?: boolean }[] }[] }} metadata
+ * @param {{ functions: SheetFunction[] }} metadata
  * @returns {string} a whole HTML document without scripts or outside resources
  */
 export function helpPage({ functions }) {
@@ -28,6 +33,7 @@ ${sorted.map(section).join("\n")}
 `;
 }
 
+/** @param {SheetFunction} entry */
 function section({ id, description, parameters }) {
   const signature = parameters.map(({ name, optional }) => (optional ? `[${name}]` : name)).join(", ");
   const rows = parameters.map(
@@ -42,4 +48,5 @@ ${(examples[id] ?? []).map(({ formula, says }) => `<p><code>${escaped(formula)}<
 </section>`;
 }
 
-const escaped = (text) => text.replace(/&/g, "&amp;").replace(/</g, "&lt;").replace(/>/g, "&gt;");
+/** @param {string | undefined} text */
+const escaped = (text = "") => text.replace(/&/g, "&amp;").replace(/</g, "&lt;").replace(/>/g, "&gt;");

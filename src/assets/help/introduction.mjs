@@ -66,7 +66,10 @@ fixed seed, for breaks that leave 15 % of the rows on either side. It covers up 
 data. Hover over the cell's mark, or select it, to read what was found and what to do.</p>
 `;
 
-/** Formulas to try, by function. */
+/**
+ * Formulas to try, by function.
+ * @type {Readonly<Record<string, { formula: string, says: string }[]>>}
+ */
 export const examples = {
   LAGCOV: [{ formula: "=COMOVE.LAGCOV(B4:E160,2)", says: "Covariances at lags 0, 1 and 2." }],
   LAGCORR: [
