@@ -28,9 +28,8 @@ async function faultsIn(xml: string): Promise<string[]> {
 if (!present)
   console.warn("The manifest was NOT checked against the vendor's schemas: they are not on this machine.");
 
-it.runIf(process.env["COMOVE_CI"] === "1")("the vendor's schemas are there to check against", () =>
-  expect(present).toBe(true),
-);
+it("the vendor's schemas are there wherever nothing may be left out", () =>
+  expect(present || process.env["COMOVE_CI"] !== "1").toBe(true));
 
 describe.skipIf(!present)("the vendor's schemas", () => {
   it("accept the development manifest", async () => expect(await faultsIn(manifest)).toEqual([]));
