@@ -72,6 +72,18 @@ export function dataSheet() {
     .put(20, G, "Your turn", SECTION)
     .block(21, G, 1, 5, "Type in G24, for the leads up to 3 weeks:")
     .sample(22, G, 5, `=COMOVE.LAGCORR(${RANGE},3)`)
-    .widths({ 0: 96, 3: 94, 5: 20, [G]: 96, 9: 94 })
+    .widths({
+      0: 88,
+      1: 78,
+      2: 78,
+      3: 90,
+      4: 62,
+      5: 16,
+      [G]: 88,
+      [H]: 78,
+      [H + 1]: 78,
+      [H + 2]: 90,
+      [H + 3]: 62,
+    })
     .build(4);
 }

@@ -29,10 +29,10 @@ export function forecastSheet() {
       2,
       "A forecast is not a guarantee. Where a decision can hurt someone (dosing, running a grid or a plant, safety stock of medicines), local codes and the licensed practitioner decide, not this sheet.",
     );
-  const widths: Record<number, number> = { 0: 96 };
-  SERIES.forEach((_, k) => {
+  const widths: Record<number, number> = { 0: 88 };
+  SERIES.forEach((name, k) => {
     sheet.dress(4, 2 + 3 * k, HORIZON, 1, FORECAST_MIDDLE);
-    for (const column of [1, 2, 3]) widths[3 * k + column] = 76;
+    for (const column of [1, 2, 3]) widths[3 * k + column] = name.length > 8 ? 78 : 64;
   });
   return sheet.widths(widths).build(4);
 }

@@ -16,7 +16,7 @@ export function modelSheet() {
     .note(
       1,
       0,
-      11,
+      10,
       2,
       "Columns are equations, rows what they multiply: next week's trips take 0.24 of the landings two weeks before. The last four rows are the covariance of what is left over. A pasted copy may be edited and used.",
     )
@@ -40,13 +40,16 @@ export function modelSheet() {
     .dress(ORDER_AT + 1, G + 7, ORDERS, 1, decimals(1))
     .dress(ORDER_AT + 1, G + 8, ORDERS, 1, decimals(4))
     .widths({
-      0: 186,
-      3: 92,
-      5: 20,
-      [G]: 80,
-      [G + 1]: 80,
-      [G + 2]: 88,
-      [G + 3]: 104,
+      0: 180,
+      1: 76,
+      2: 76,
+      3: 90,
+      4: 76,
+      5: 16,
+      [G]: 72,
+      [G + 1]: 68,
+      [G + 2]: 82,
+      [G + 3]: 102,
       [G + 4]: 80,
       [G + 9]: 150,
     })
