@@ -1,4 +1,4 @@
-import { answer } from "./answer";
+import { answer, answerLater } from "./answer";
 import { residtest } from "../sheet/calls/residtest";
 import { granger } from "../sheet/calls/granger";
 
@@ -24,8 +24,15 @@ export function GRANGER(series: any[][], model?: any[][], options?: any[][], dri
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
  * @param [options] Options as "key=value; key=value" or as two columns: testlags, fit, terms, cycle, waves, steps and more.
  * @param [drivers] Outside series, one per column, beside the series.
- * @returns {any[][]} One row per test.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} One row per test.
  */
-export function RESIDTEST(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
-  return answer(residtest, { series, model, options, drivers });
+export function RESIDTEST(
+  series: any[][],
+  model?: any[][],
+  options?: any[][],
+  drivers?: any[][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(residtest, { series, model, options, drivers }, invocation);
 }

@@ -1,4 +1,4 @@
-import { answer } from "./answer";
+import { answer, answerLater } from "./answer";
 import { order } from "../sheet/calls/order";
 import { model as modelCall } from "../sheet/calls/model";
 import { estimates } from "../sheet/calls/estimates";
@@ -27,10 +27,17 @@ export function ORDER(series: any[][], maxorder: any[][], options?: any[][], dri
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose settings to use.
  * @param [options] Options as "key=value; key=value" or as two columns: fit, terms, cycle, waves, steps and more.
  * @param [drivers] Outside series, one per column, beside the series.
- * @returns {any[][]} The model block: one column per equation, one row per regressor.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} The model block: one column per equation, one row per regressor.
  */
-export function MODEL(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
-  return answer(modelCall, { series, model, options, drivers });
+export function MODEL(
+  series: any[][],
+  model?: any[][],
+  options?: any[][],
+  drivers?: any[][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(modelCall, { series, model, options, drivers }, invocation);
 }
 
 /**
@@ -52,10 +59,17 @@ export function ROOTS(model: any[][]): any[][] {
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose settings to use.
  * @param [options] Options as "key=value; key=value" or as two columns: coverage, fit, terms, cycle, waves, steps and more.
  * @param [drivers] Outside series, one per column, beside the series.
- * @returns {any[][]} One row per coefficient.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} One row per coefficient.
  */
-export function ESTIMATES(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
-  return answer(estimates, { series, model, options, drivers });
+export function ESTIMATES(
+  series: any[][],
+  model?: any[][],
+  options?: any[][],
+  drivers?: any[][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(estimates, { series, model, options, drivers }, invocation);
 }
 
 /**
@@ -66,10 +80,17 @@ export function ESTIMATES(series: any[][], model?: any[][], options?: any[][], d
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
  * @param [options] Options as "key=value; key=value" or as two columns: fit, terms, cycle, waves, steps and more.
  * @param [drivers] Outside series, one per column, beside the series.
- * @returns {any[][]} One row per row of the series; the first rows are blank.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} One row per row of the series; the first rows are blank.
  */
-export function FITTED(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
-  return answer(fitted, { series, model, options, drivers });
+export function FITTED(
+  series: any[][],
+  model?: any[][],
+  options?: any[][],
+  drivers?: any[][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(fitted, { series, model, options, drivers }, invocation);
 }
 
 /**
@@ -80,8 +101,15 @@ export function FITTED(series: any[][], model?: any[][], options?: any[][], driv
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
  * @param [options] Options as "key=value; key=value" or as two columns: fit, terms, cycle, waves, steps and more.
  * @param [drivers] Outside series, one per column, beside the series.
- * @returns {any[][]} One row per row of the series; the first rows are blank.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} One row per row of the series; the first rows are blank.
  */
-export function RESIDUALS(series: any[][], model?: any[][], options?: any[][], drivers?: any[][]): any[][] {
-  return answer(residuals, { series, model, options, drivers });
+export function RESIDUALS(
+  series: any[][],
+  model?: any[][],
+  options?: any[][],
+  drivers?: any[][],
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(residuals, { series, model, options, drivers }, invocation);
 }

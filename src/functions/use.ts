@@ -16,7 +16,8 @@ import { whatif } from "../sheet/calls/whatif";
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
  * @param [options] Options as "key=value; key=value" or as two columns: terms, cycle, waves, steps, point and more.
  * @param [drivers] Outside series beside the series, with a row for every row ahead.
- * @returns {any[][]} The forecast block.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} The forecast block.
  */
 export function AHEAD(
   series: any[][],
@@ -24,8 +25,9 @@ export function AHEAD(
   model?: any[][],
   options?: any[][],
   drivers?: any[][],
-): any[][] {
-  return answer(ahead, { series, horizon, model, options, drivers });
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(ahead, { series, horizon, model, options, drivers }, invocation);
 }
 
 /**
@@ -60,7 +62,8 @@ export function BANDS(
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
  * @param [options] Options as "key=value; key=value" or as two columns: terms, cycle, waves, steps, point and more.
  * @param [drivers] Outside series beside the series, with a row for every row ahead.
- * @returns {any[][]} The forecast block, imposed cells as imposed.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} The forecast block, imposed cells as imposed.
  */
 export function WHATIF(
   series: any[][],
@@ -68,8 +71,9 @@ export function WHATIF(
   model?: any[][],
   options?: any[][],
   drivers?: any[][],
-): any[][] {
-  return answer(whatif, { series, plan, model, options, drivers });
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(whatif, { series, plan, model, options, drivers }, invocation);
 }
 
 /**
@@ -106,7 +110,8 @@ export function SHOCKSHARE(model: any[][], horizon: any): any[][] {
  * @param [model] Blank or auto for an automatic order, a whole number for the order, or a model block whose numbers to use.
  * @param [options] Options as "key=value; key=value" or as two columns: terms, cycle, waves, steps and more.
  * @param [drivers] Outside series, one per column, beside the series.
- * @returns {any[][]} One row per row used: actual, baseline, then one contribution per series; they add up to the actual.
+ * @param {CustomFunctions.CancelableInvocation} [invocation] Told when the result is no longer wanted.
+ * @returns {Promise<any[][]>} One row per row used: actual, baseline, then one contribution per series; they add up to the actual.
  */
 export function SHOCKPAST(
   series: any[][],
@@ -114,8 +119,9 @@ export function SHOCKPAST(
   model?: any[][],
   options?: any[][],
   drivers?: any[][],
-): any[][] {
-  return answer(shockpast, { series, target, model, options, drivers });
+  invocation?: CustomFunctions.CancelableInvocation,
+): Promise<any[][]> {
+  return answerLater(shockpast, { series, target, model, options, drivers }, invocation);
 }
 
 /**

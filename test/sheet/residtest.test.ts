@@ -61,8 +61,8 @@ describe("RESIDTEST", () => {
       );
   });
 
-  it("judges a block by its numbers as they stand", () => {
-    const block = MODEL(series as any[][], [[1]]);
+  it("judges a block by its numbers as they stand", async () => {
+    const block = await MODEL(series as any[][], [[1]]);
     expect(table({ model: block })).toEqual(found);
     const edited = block.map((row, i) => (i === 2 ? [row[0], 0, 0, 0] : row));
     expect(reading(table({ model: edited }), "Breusch–Godfrey LM")).toMatch(/^something is left/);

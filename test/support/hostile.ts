@@ -18,7 +18,7 @@ export const NAMES = ["price", "orders", "stock"] as const;
 const rows = inventedSeries(60, 3);
 export const goodSeries = withHeader(NAMES, rows);
 const bare = rows.map((row) => [...row]);
-const order2 = MODEL(goodSeries, [[2]]);
+const order2 = await MODEL(goodSeries, [[2]]);
 
 /** Replaces one cell of a range. */
 const put = (range: readonly (readonly unknown[])[], row: number, column: number, value: unknown) =>
