@@ -30,10 +30,7 @@ export class Engine implements Runner {
 
   /** Computes here and now. */
   run<N extends TaskName>(task: N, request: RequestOf<N>): ResultOf<N> {
-    return this.#cache.get(content(task, request), () => {
-      const begun = this.#begin(task, request);
-      return isLongWork(begun) ? atOnce(begun) : begun;
-    });
+    return this.#here(content(task, request), task, request);
   }
 
   /**
@@ -46,7 +43,7 @@ export class Engine implements Runner {
     { left, preview = false }: Waiting = {},
   ): Promise<ResultOf<N>> {
     const key = content(task, request);
-    if (this.#cache.has(key) || !isHeavy(task, request)) return this.run(task, request);
+    if (this.#cache.has(key) || !isHeavy(task, request)) return this.#here(key, task, request);
     if (preview) throw new Issue({ code: "not-in-preview" });
     let work = this.#underWay.get(key) as SharedWork<ResultOf<N>> | undefined;
     if (work === undefined) {
@@ -57,6 +54,13 @@ export class Engine implements Runner {
   }
 
   readonly fit = (request: ModelRequest): ResultOf<"fit"> => this.run("fit", request);
+
+  #here<N extends TaskName>(key: string, task: N, request: RequestOf<N>): ResultOf<N> {
+    return this.#cache.get(key, () => {
+      const begun = this.#begin(task, request);
+      return isLongWork(begun) ? atOnce(begun) : begun;
+    });
+  }
 
   async #beside<N extends TaskName>(
     task: N,
