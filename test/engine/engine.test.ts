@@ -40,6 +40,16 @@ describe("what is heavy", () => {
     expect(isHeavy("ahead", { sample, plan: { kind: "given", model: { ...model, settings } } })).toBe(false);
   });
 
+  it("a plan with hundreds of imposed cells is, one with a few is not, however long", () => {
+    const { sample, plan } = heavy;
+    const held = (rows: number, cells: number) =>
+      Array.from({ length: rows }, (_, j) => [j < cells ? 20 : NaN, NaN, NaN, NaN]);
+    const asked = (imposed: number[][]) => ({ sample, plan, imposed, point: "median" });
+    expect(isHeavy("whatIf", asked(held(300, 300)))).toBe(true);
+    expect(isHeavy("whatIf", asked(held(12, 12)))).toBe(false);
+    expect(isHeavy("whatIf", asked(held(10_000, 3)))).toBe(false);
+  });
+
   it("requests without a model are not", () =>
     expect(isHeavy("lagCovariance", { series: [[1], [2]], lags: [1], divisor: "n" })).toBe(false));
 });
