@@ -9,6 +9,7 @@ import {
   type MomentValues,
   type VarValues,
 } from "../support/references";
+import { responseSuite, type ResponseValues } from "../support/response-references";
 
 /**
  * Runs R and statsmodels where they are installed and compares live. Where they are missing this says so, and with
@@ -54,4 +55,5 @@ describe("live: statsmodels", () => {
   required(python !== undefined, "statsmodels");
   if (python === undefined) return;
   varSuite(run<VarValues>(python, [`${folder}scripts/var.py`, `${folder}data`]));
+  responseSuite(run<ResponseValues>(python, [`${folder}scripts/responses.py`, `${folder}data`]));
 });

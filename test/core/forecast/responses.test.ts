@@ -1,15 +1,13 @@
 import { describe, expect, it } from "vitest";
 import { responsesTo, shockShares } from "../../../src/core/forecast/responses";
 import type { Matrix } from "../../../src/core/matrix";
-import { fitModel } from "../../../src/core/var/fit";
 import type { VarModel } from "../../../src/core/var/model";
 import hand from "../../reference/hand-cases.json";
 import reference from "../../reference/statsmodels-responses.json";
 import { blockClose, close } from "../../support/close";
-import { readCsv } from "../../support/data";
 import { frozen } from "../../support/frozen";
+import { responseSuite } from "../../support/response-references";
 import { modelWith, permuted, rescaled, threeSeries } from "../../support/models";
-import { sampleOf, settingsOfOrder } from "../../support/requests";
 
 const fraction = (text: string | number): number => {
   const [top, bottom = "1"] = String(text).split("/");
@@ -143,27 +141,4 @@ describe("identities", () => {
   });
 });
 
-describe.each(reference.cases)("$name against statsmodels", (expected) => {
-  const { levels, diff } = {
-    german: {
-      levels: readCsv("e1_west_german_inv_inc_cons_1960Q1_1982Q4.csv", ["invest", "income", "cons"]).slice(0, 76),
-      diff: true,
-    },
-    macro: { levels: readCsv("macrodata.csv", ["realgdp", "realcons", "realinv"]), diff: true },
-    danish: { levels: readCsv("danish_johansen_juselius_1990.csv", ["lrm", "lry", "ibo", "ide"]), diff: false },
-  }[expected.name]!; // prettier-ignore
-  const steps = levels[0].map(() =>
-    diff ? [{ kind: "log" } as const, { kind: "diff", span: 1 } as const] : [],
-  );
-  const settings = settingsOfOrder(levels[0].length, expected.order, { steps });
-  const model = fitModel({ sample: sampleOf(levels), plan: { kind: "fit", settings } });
-
-  it("innovation covariance", () => blockClose(model.noiseCovariance, expected.sigma, 1e-9));
-  it.each(["unit", "orthogonal"] as const)("%s responses", (shock) =>
-    at(model, expected.horizon, shock).forEach((matrix, j) => blockClose(matrix, expected[shock][j], 1e-9)),
-  );
-  it("variance shares", () =>
-    shockShares({ model, horizon: expected.horizon }).forEach((matrix, j) =>
-      blockClose(matrix, expected.shares[j], 1e-9),
-    ));
-});
+responseSuite(reference);
