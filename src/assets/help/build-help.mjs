@@ -1,4 +1,5 @@
-import { introduction, examples } from "./introduction.mjs";
+import { examples, examplesStand } from "./examples.mjs";
+import { introduction } from "./introduction.mjs";
 import { style } from "./style.mjs";
 
 /**
@@ -25,6 +26,7 @@ export function helpPage({ functions }) {
 <main>
 ${introduction}
 <h2 id="functions">The functions</h2>
+<p>${examplesStand}</p>
 <nav>${sorted.map(({ id }) => `<a href="#${id}">${id}</a>`).join(" ")}</nav>
 ${sorted.map(section).join("\n")}
 </main>
