@@ -11,6 +11,9 @@ export interface Region {
 /** Rows of a sheet: what a whole column such as B:E holds. */
 const ALL_ROWS = 1_048_576;
 
+/** Columns of a sheet, A to XFD. */
+export const ALL_COLUMNS = 16_384;
+
 const CELL = /^\$?([A-Z]{1,3})\$?([1-9]\d{0,6})$/i;
 const COLUMN = /^\$?([A-Z]{1,3})$/i;
 
@@ -76,9 +79,17 @@ export function formatAddress({ sheet, row, column, rows, columns }: Region): st
 /** The address without its sheet, as people say it. */
 export const cellsOf = (address: string): string => splitAddress(address).cells;
 
+/** Do two names mean one sheet? A spreadsheet takes no notice of capitals. */
+export const isSameSheet = (a: string | null, b: string | null): boolean =>
+  a?.toLowerCase() === b?.toLowerCase();
+
+/** Does a region end within the sheet? */
+export const isOnSheet = ({ row, rows, column, columns }: Region): boolean =>
+  row + rows <= ALL_ROWS && column + columns <= ALL_COLUMNS;
+
 /** Do two regions share a cell? */
 export const overlap = (a: Region, b: Region): boolean =>
-  a.sheet === b.sheet &&
+  isSameSheet(a.sheet, b.sheet) &&
   a.row < b.row + b.rows &&
   b.row < a.row + a.rows &&
   a.column < b.column + b.columns &&

@@ -1,9 +1,8 @@
-import { formatAddress, isOneCell, parseAddress } from "./address";
+import { ALL_COLUMNS, formatAddress, isOneCell, isOnSheet, parseAddress } from "./address";
 import type { SheetHost } from "./host/sheet-host";
 
 /** Columns looked at for a free place, to the right of a block. */
 const SEARCHED = 60;
-const LAST_COLUMN = 16_384;
 
 /**
  * The first cell right of a block from which a result of the size given lies free, with a blank column on either
@@ -17,8 +16,8 @@ export async function freePlace(
   const block = parseAddress(address);
   if (!block || isOneCell(block)) return null;
   const column = block.column + block.columns;
-  const width = Math.min(SEARCHED, LAST_COLUMN - column);
-  if (width < columns + 2) return null;
+  const width = Math.min(SEARCHED, ALL_COLUMNS - column);
+  if (width < columns + 2 || !isOnSheet({ ...block, rows })) return null;
   const cells = await host.readBlock(formatAddress({ ...block, column, columns: width, rows }));
   const used = Array.from({ length: width }, (_, j) => cells.some((row) => (row[j] ?? null) !== null));
   for (let from = 1; from + columns < width; from++) {

@@ -25,6 +25,7 @@ export function mountPane(
   let state: PaneState = initialState;
   let shown: Block | null | undefined;
   let looks = 0;
+  let writing = false;
 
   const block = element("div", { className: "block" });
   block.setAttribute("aria-live", "polite");
@@ -100,7 +101,11 @@ export function mountPane(
   }
 
   async function write(): Promise<void> {
+    // a second press while the first is at work would find the first forecast in the way
+    if (writing) return;
+    writing = true;
     await attempt(() => writeForecast(host, state));
+    writing = false;
     // what was written is shown, even where it lies out of sight
     if (state.notice?.kind === "done") await attempt(() => host.select(placeOf(state)).then(() => ({})));
   }

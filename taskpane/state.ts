@@ -1,4 +1,4 @@
-import { formatAddress, isOneCell, overlap, parseAddress, type Region } from "./address";
+import { formatAddress, isOneCell, isSameSheet, overlap, parseAddress, type Region } from "./address";
 import type { Reading } from "./reading";
 
 /** A block of series that the user selected, and what was found in it. */
@@ -96,7 +96,8 @@ export function faultyWish({ horizon, cycle, waves }: Wishes): keyof Wishes | nu
 export function forecastFormula(state: PaneState): string {
   const { horizon, cycle, waves } = state.wishes;
   const block = parseAddress(state.block!.address)!;
-  const sheet = corner(state)?.sheet === block.sheet ? null : block.sheet;
+  const at = corner(state);
+  const sheet = at && isSameSheet(at.sheet, block.sheet) ? null : block.sheet;
   const season = cycle === null ? "" : `,,"cycle=${cycle}${waves === null ? "" : `; waves=${waves}`}"`;
   return `=COMOVE.AHEAD(${formatAddress({ ...block, sheet })},${horizon}${season})`;
 }

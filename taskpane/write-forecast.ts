@@ -1,5 +1,5 @@
 import { paneWords as words } from "../src/texts/en";
-import { cellsOf, formatAddress, overlap, parseAddress } from "./address";
+import { cellsOf, formatAddress, isOnSheet, overlap, parseAddress } from "./address";
 import type { SheetHost } from "./host/sheet-host";
 import { readSelection } from "./reading";
 import { faultyWish, forecastFormula, forecastRegion, isClean, placeOf, type PaneState } from "./state";
@@ -12,6 +12,7 @@ export async function writeForecast(host: SheetHost, state: PaneState): Promise<
   if (faulty !== null) return refused(words.faulty[faulty]);
   const region = forecastRegion(state);
   if (!block || !region) return refused(words.badPlace(placeOf(state)));
+  if (!isOnSheet(region)) return refused(words.overTheEdge);
   const read = parseAddress(block.address);
   if (read && overlap(region, read)) return refused(words.inTheWay);
   // the data may have changed since they were read

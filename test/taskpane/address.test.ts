@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { columnLetters, formatAddress, overlap, parseAddress } from "../../taskpane/address";
+import { columnLetters, formatAddress, isOnSheet, overlap, parseAddress } from "../../taskpane/address";
 
 describe("addresses", () => {
   it.each([
@@ -37,6 +37,9 @@ describe("addresses", () => {
     expect(overlap(at("Data!B4:E9"), at("Data!F4:F9"))).toBe(false);
     expect(overlap(at("Data!B4:E9"), at("Plan!B4:E9"))).toBe(false);
     expect(overlap(at("Data!B:E"), at("Data!E700"))).toBe(true);
+    // capitals make no other sheet
+    expect(overlap(at("Data!B:E"), at("data!E700"))).toBe(true);
+    expect(overlap(at("B4:E9"), at("Data!B4"))).toBe(false);
   });
 
   it.each(["", "B", "4", "B0", "B4:C5:D6", "Data!", "ABCD1", "Data!A1,Data!C3", "'a b'!A1,'a b'!C3"])(
@@ -45,6 +48,14 @@ describe("addresses", () => {
       expect(parseAddress(address)).toBeNull();
     },
   );
+
+  it.each([
+    ["XFD1048576", true],
+    ["XFC1:XFE9", false],
+    ["A1048570:A1048577", false],
+  ])("%s ends within a sheet: %s", (address, within) => {
+    expect(isOnSheet(parseAddress(address)!)).toBe(within);
+  });
 
   it("writing is the inverse of reading", () => {
     for (const address of ["B4", "B4:E160", "Data!A1", "'Cold store'!AZ10:BA11", "'it''s'!XFD1048576"]) {

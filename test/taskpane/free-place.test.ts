@@ -36,4 +36,10 @@ describe("a free place beside a block", () => {
     expect(await freePlace(host, "Data!XFA4:XFB9", { rows: 3, columns: 2 })).toBeNull();
     expect(asked).toEqual([]);
   });
+
+  it("does not look below the last row of a sheet", async () => {
+    const { host, asked } = hostWith({});
+    expect(await freePlace(host, "Data!B1048570:C1048576", { rows: 13, columns: 2 })).toBeNull();
+    expect(asked).toEqual([]);
+  });
 });

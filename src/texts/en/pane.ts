@@ -43,6 +43,8 @@ export const paneWords = {
   },
   badPlace: (place: string) => `'${place}' is not a cell. Give one such as H4.`,
   inTheWay: "The forecast would cover the data it reads. Choose a cell outside the block.",
+  overTheEdge:
+    "The forecast would run over the edge of the sheet. Choose a cell further up or left, or fewer rows ahead.",
   occupied: (filled: number, first: string) =>
     `${filled === 1 ? "One cell" : `${filled.toLocaleString("en-US")} cells`} would be in the way, the first at ${first}. Choose another place, or clear ${filled === 1 ? "it" : "them"}.`,
   changed: "The data have changed and need mending first.",
