@@ -165,7 +165,8 @@ export interface Eigenvalue {
  * @throws Issue "too-large"
  */
 export function eigenvalues(a: Matrix): Eigenvalue[] {
-  const top = Math.max(0, ...a.flatMap((row) => row.map(Math.abs)));
+  // not spread into one call of Math.max: the cells of a long companion matrix are too many arguments
+  const top = a.reduce((most, row) => row.reduce((m, v) => Math.max(m, Math.abs(v)), most), 0);
   if (top === 0) return a.map(() => ({ real: 0, imaginary: 0 }));
   if (!Number.isFinite(top)) throw new Issue({ code: "too-large" });
   // squares of numbers near the end of the range overflow, and the library then never comes back

@@ -30,8 +30,6 @@ export const SETTING_KEYS = [
   "steps",
   "pull",
   "fade",
-  "pull",
-  "fade",
 ] as const satisfies readonly OptionKey[];
 /** The keys that choose an order. */
 export const CHOICE_KEYS = ["criterion", "maxorder"] as const satisfies readonly OptionKey[];

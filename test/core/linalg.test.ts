@@ -183,6 +183,10 @@ describe("eigenvalues", () => {
       [-1, 1],
     );
   });
+  it("of a matrix with more cells than one call takes arguments", () => {
+    const found = eigenvalues(identity(400).map((row, i) => row.map((v) => v * (i + 1))));
+    expect(found.map(({ real }) => real).sort((p, q) => p - q)).toEqual(found.map((_, i) => i + 1));
+  });
   it("none of an empty matrix", () => expect(eigenvalues([])).toEqual([]));
 });
 
