@@ -104,6 +104,7 @@ export type IssueFacts =
       readonly largest: number | null;
     }
   | { readonly code: "too-heavy"; readonly rows: number; readonly coefficients: number }
+  | { readonly code: "too-many-states"; readonly states: number; readonly limit: number }
   | { readonly code: "lags-beyond-rows"; readonly lag: number; readonly rows: number }
   | {
       readonly code: "step-domain";
@@ -116,6 +117,7 @@ export type IssueFacts =
   | { readonly code: "constant-series"; readonly series: number }
   | { readonly code: "exact-combination"; readonly columns: readonly WeightedColumn[] }
   | { readonly code: "predicted-exactly"; readonly order: number }
+  | { readonly code: "nothing-left-over"; readonly series: number }
   | { readonly code: "singular-system" }
   | { readonly code: "unstable"; readonly modulus: number }
   | { readonly code: "no-lags" }

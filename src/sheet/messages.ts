@@ -18,6 +18,7 @@ const NOT_AVAILABLE: ReadonlySet<IssueCode> = new Set<IssueCode>([
   "constant-series",
   "exact-combination",
   "predicted-exactly",
+  "nothing-left-over",
   "singular-system",
   "covariance-not-positive",
   "unstable",

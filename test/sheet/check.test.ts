@@ -5,10 +5,11 @@ import { impliedcov } from "../../src/sheet/calls/impliedcov";
 import { model } from "../../src/sheet/calls/model";
 import { fitted, residuals } from "../../src/sheet/calls/one-step";
 import { partiallag } from "../../src/sheet/calls/partiallag";
+import { frozen } from "../support/frozen";
 import { inventedSeries } from "../support/invented";
 import { ask, errorOf, withHeader } from "../support/sheet";
 
-const rows = inventedSeries(60, 3);
+const rows = frozen(inventedSeries(60, 3));
 const names = ["fish", "ice", "trips"];
 const series = withHeader(names, rows);
 
@@ -95,7 +96,68 @@ describe("tables about a model", () => {
     expect(implied).toHaveLength(7);
   });
 
+  it("header in, header out: the same numbers bare, or with labels as asked", () => {
+    for (const call of [fitted, residuals, granger]) {
+      const bare = ask(call, { series: rows, model: 1 });
+      const labelled = ask(call, { series, model: 1 });
+      const first = call === granger ? 1 : 0;
+      expect(labelled.slice(1).map((row) => row.slice(first))).toEqual(bare);
+      expect(ask(call, { series, model: 1, options: "labels=no" })).toEqual(bare);
+      expect(ask(call, { series: rows, model: 1, options: "labels=yes" })[0].slice(first)).toEqual(["y1", "y2", "y3"]); // prettier-ignore
+    }
+    const bare = ask(partiallag, { series: rows, lags: 2 });
+    expect(bare).toHaveLength(6);
+    expect(ask(partiallag, { series, lags: 2 }).slice(1).map((row) => row.slice(2, 5))).toEqual(bare); // prettier-ignore
+    // a table with words keeps its labels
+    expect(ask(estimates, { series: rows, model: 1 })[2].slice(0, 2)).toEqual(["y1", "y1, lag 1"]);
+    expect(errorOf(estimates, { series, model: 1, options: "labels=no" })).toMatch(/^#VALUE! This result is a table/); // prettier-ignore
+  });
+
+  it("FITTED plus RESIDUALS are the series, and the rows of what STEPS spends are blank", () => {
+    const padded = [...Array.from({ length: 2 }, () => ["", "", ""]), ...rows];
+    const levels = ask(fitted, { series: padded, model: 1 });
+    const rest = ask(residuals, { series: padded, model: 1 });
+    expect(levels).toHaveLength(60);
+    levels.slice(1).forEach((row, t) =>
+      row.forEach((v, k) => expect((v as number) + (rest[t + 1][k] as number)).toBeCloseTo(rows[t + 1][k], 10)),
+    ); // prettier-ignore
+  });
+
+  it("ESTIMATES and GRANGER take a block's settings only: its edited numbers change nothing", () => {
+    const block = ask(model, { series, model: 2 }).map((row) => [...row]);
+    block[1][1] = (block[1][1] as number) + 5;
+    for (const call of [estimates, granger])
+      expect(ask(call, { series, model: block })).toEqual(ask(call, { series, model: 2 }));
+  });
+
+  it("limits of ESTIMATES widen with coverage and hold the coefficient between them", () => {
+    const narrow = ask(estimates, { series, model: 1, options: "coverage=0.5" }).slice(1);
+    const wide = ask(estimates, { series, model: 1, options: "coverage=0,99" }).slice(1);
+    narrow.forEach(([, , b, low, high], i) => {
+      expect(low as number).toBeLessThan(b as number);
+      expect(high as number).toBeGreaterThan(b as number);
+      expect(wide[i][3] as number).toBeLessThan(low as number);
+    });
+  });
+
+  it("a refused option names each allowed one once", () => {
+    const text = errorOf(granger, { series, model: 1, options: "draws=3" }) as string;
+    const named = text.replace(/^.*Options here: /, "").match(/[a-z]+/g)!;
+    expect(new Set(named).size).toBe(named.length);
+    expect(named).toContain("spare");
+  });
+
   it("what cannot be is refused in words", () => {
+    const copied = rows.map(([a], t) => [a, t === 0 ? 9 : rows[t - 1][0]]);
+    expect(errorOf(granger, { series: withHeader(["ice", "later ice"], copied), model: 1 })).toMatch(
+      /^#N\/A Series later ice is predicted without any error/,
+    );
+    expect(errorOf(impliedcov, { model: [["comove model p=1"]], lags: 1 })).toMatch(
+      /^#VALUE! This is one cell/,
+    );
+    const block = ask(model, { series, model: 1 }).map((row) => [...row]);
+    block[2][1] = 1.5;
+    expect(errorOf(impliedcov, { model: block, lags: 1 })).toMatch(/^#N\/A This model is not stable/);
     expect(errorOf(granger, { series: rows.map(([a]) => [a]), model: 1 })).toBe(
       "#N/A One series alone has no other to be led by. Point at two or more.",
     );

@@ -106,6 +106,8 @@ const examples: readonly IssueFacts[] = [
   { code: "fit-all-lags", fit: "nuttall-strand" },
   { code: "bad-option", key: "fade", found: "text '-1'", allowed: { kind: "number-from", from: 0 } },
   { code: "too-heavy", rows: 20_000, coefficients: 506 },
+  { code: "too-many-states", states: 400, limit: 241 },
+  { code: "nothing-left-over", series: 1 },
   { code: "singular-system" },
   { code: "unstable", modulus: 1.0213 },
   { code: "no-lags" },
@@ -204,7 +206,7 @@ describe("the two errors", () => {
     const codes = (kind: string) => new Set(examples.filter((f) => kindOf(f) === kind).map(({ code }) => code));
     expect([...codes("not-available")].sort()).toEqual([
       "block-needs-rows", "cancelled", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags",
-      "not-in-preview", "plan-singular", "predicted-exactly", "redraws-fail", "singular-system", "start-needed", "steps-leave-nothing",
+      "not-in-preview", "nothing-left-over", "plan-singular", "predicted-exactly", "redraws-fail", "singular-system", "start-needed", "steps-leave-nothing",
       "too-few-rows", "too-large", "unstable",
     ]);
     for (const code of ["gap", "covariance-asymmetric", "model-block", "bad-option"] as const) expect(codes("value")).toContain(code);

@@ -3,6 +3,7 @@ import { multiply, solveSquare, transpose } from "../linalg";
 import { Issue } from "../issue";
 import type { Matrix } from "../matrix";
 import { designOf } from "../var/design";
+import { refuseExactSeries, refuseNoiseless } from "../var/exact";
 import { leastSquares, residualCovariance } from "../var/least-squares";
 import { requireRows } from "../var/rows-needed";
 import type { Sample } from "../var/sample";
@@ -14,7 +15,8 @@ import { stepSample } from "../var/stepped";
  * coefficients in the one equation, least squares, T − q denominator degrees of freedom.
  * @param spare lags fitted beyond the order and left out of the test, for integrated series
  * @returns K×K, row = effect, column = cause, NaN on the diagonal
- * @throws Issue "needs-two-series" | "no-lags" | "too-few-rows" | "exact-combination"
+ * @throws Issue "needs-two-series" | "no-lags" | "too-few-rows" | "constant-series" | "exact-combination" |
+ *   "nothing-left-over"
  * Source: Lütkepohl (2005), 3.6.1; Toda and Yamamoto (1995) for the spare lags
  */
 export function grangerPValues(sample: Sample, settings: ModelSettings, spare: number): Matrix {
@@ -29,10 +31,12 @@ export function grangerPValues(sample: Sample, settings: ModelSettings, spare: n
   const stepped = stepSample(sample, settings.steps);
   const series = stepped.y[0].length;
   requireRows(fitted, { rows: stepped.y.length, series, drivers: stepped.drivers[0]?.length ?? 0 });
+  refuseExactSeries(stepped.y, fitted, stepped.start);
   const design = designOf(stepped, fitted, orderOf(fitted));
   const { coefficients, residuals, inverseRoot } = leastSquares(design);
   const freedom = residuals.length - design.regressors.length;
   const noise = residualCovariance(residuals, freedom);
+  refuseNoiseless(noise, stepped.y);
   return noise.map((_, effect) =>
     noise.map((_, cause) => {
       if (cause === effect) return NaN;

@@ -2,9 +2,11 @@ import { Issue } from "../issue";
 import { add, multiply, transpose } from "../linalg";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
 import { innovationRoot } from "../var/innovation-root";
-import { lagMatrices } from "../var/lag-matrices";
+import { lagMatrices, movingAverageMatrices } from "../var/lag-matrices";
 import type { VarModel } from "../var/model";
 import { companionMatrix, largestRoot } from "../var/roots";
+import { orderOf } from "../var/settings";
+import { requireStates } from "../var/work";
 import { symmetric } from "./whittle";
 
 /** Doublings after which a sum of powers has settled even for a largest root of 1 − 1e-12. */
@@ -12,23 +14,24 @@ const DOUBLINGS = 60;
 
 /**
  * Γ(0) … Γ(lags) that a model's numbers imply for the stepped series, Γ(k)[i][j] = Cov(i at t, j at t − k).
- * The state of the companion form has P = F·P·Fᵀ + Q; its first blocks are Γ(0) … Γ(p − 1), and
- * Γ(k) = Σ_l Φ(l)Γ(k − l) beyond.
- * @throws Issue "unstable" | "covariance-not-positive" | "covariance-asymmetric"
- * Source: Lütkepohl (2005), (2.1.32), (2.1.36); doubling after Anderson and Moore (1979), 6.7
+ * The state holds y(t) … y(t − r + 1), r the larger of p and q + 1, and the innovations of a moving average of
+ * order q; P = F·P·Fᵀ + Q. Its first blocks are Γ(0) … Γ(r − 1), and Γ(k) = Σ_l Φ(l)Γ(k − l) beyond.
+ * @throws Issue "unstable" | "too-many-states" | "covariance-not-positive" | "covariance-asymmetric"
+ * Source: Lütkepohl (2005), (2.1.32), (2.1.36), 11.3.2; doubling after Anderson and Moore (1979), 6.7
  */
 export function impliedCovariances(model: VarModel, lags: number): Matrix[] {
+  const k = model.series;
+  const remembered = Math.max(orderOf(model.settings), model.settings.movingAverage + 1);
+  requireStates(k * (remembered + model.settings.movingAverage));
   const modulus = largestRoot(model);
   if (modulus >= 1) throw new Issue({ code: "unstable", modulus });
   const root = innovationRoot(model);
-  const noise = multiply(root, transpose(root));
-  const k = model.series;
   const phi = lagMatrices(model);
-  if (phi.length === 0) return [noise, ...Array.from({ length: lags }, () => zeros(k, k))];
-  const state = stationaryCovariance(companionMatrix(phi), noise);
-  const block = (lag: number): Matrix => state.slice(0, k).map((row) => row.slice(lag * k, (lag + 1) * k));
-  const gamma: Matrix[] = phi.map((_, lag) => block(lag));
-  for (let lag = phi.length; lag <= lags; lag++) {
+  const state = stateCovariance(model, remembered, multiply(root, transpose(root)));
+  const gamma = Array.from({ length: remembered }, (_, lag): Matrix =>
+    state.slice(0, k).map((row) => row.slice(lag * k, (lag + 1) * k)),
+  );
+  for (let lag = remembered; lag <= lags; lag++) {
     gamma.push(
       model.settings.lags.reduce<Matrix>(
         (sum, l) => add(sum, multiply(phi[l - 1], gamma[lag - l])),
@@ -39,12 +42,29 @@ export function impliedCovariances(model: VarModel, lags: number): Matrix[] {
   return gamma.slice(0, lags + 1);
 }
 
-/** P = Σ_j F^j·Q·(F^j)ᵀ, Q the innovation covariance in the first block; each pass doubles the powers summed. */
-function stationaryCovariance(companion: Matrix, noise: Matrix): Matrix {
-  const start: MutableMatrix = zeros(companion.length, companion.length);
-  noise.forEach((row, i) => row.forEach((v, j) => (start[i][j] = v)));
-  let sum: Matrix = start;
-  let power: Matrix = companion;
+/** Covariance of the stationary state: `remembered` rows of the series, then the past innovations. */
+function stateCovariance(model: VarModel, remembered: number, noise: Matrix): Matrix {
+  const k = model.series;
+  const theta = movingAverageMatrices(model);
+  const none = Array.from({ length: remembered - orderOf(model.settings) }, () => zeros(k, k));
+  const newest = remembered * k;
+  // one shifted identity serves both parts, once the newest innovation takes nothing over from the oldest y
+  const transition = companionMatrix([...lagMatrices(model), ...none, ...theta]).map((row, i) =>
+    i >= newest && i < newest + k ? row.map(() => 0) : row,
+  );
+  const enters = theta.length > 0 ? [0, newest] : [0];
+  const start: MutableMatrix = zeros(transition.length, transition.length);
+  for (const row of enters) {
+    for (const column of enters)
+      noise.forEach((values, i) => values.forEach((v, j) => (start[row + i][column + j] = v)));
+  }
+  return stationaryCovariance(transition, start);
+}
+
+/** P = Σ_j F^j·Q·(F^j)ᵀ; each pass doubles the powers summed. */
+function stationaryCovariance(transition: Matrix, noise: Matrix): Matrix {
+  let sum = noise;
+  let power = transition;
   for (let pass = 0; pass < DOUBLINGS; pass++) {
     const next = symmetric(add(sum, multiply(multiply(power, sum), transpose(power))));
     const settled = next.every((row, i) => row.every((v, j) => v === sum[i][j]));

@@ -3,6 +3,7 @@ import { Issue } from "../issue";
 import { logDeterminant } from "../linalg";
 import type { Matrix } from "../matrix";
 import { designOf } from "../var/design";
+import { refuseExactSeries } from "../var/exact";
 import { leastSquares, residualCovariance } from "../var/least-squares";
 import { requireRows } from "../var/rows-needed";
 import { allLags, plainShape, type ModelSettings } from "../var/settings";
@@ -24,13 +25,14 @@ export interface PartialLag {
  * (T − q − ½)·ln(|Σ̃ₖ₋₁|/|Σ̃ₖ|), least squares with constant of orders k − 1 and k on the same T = n − k rows,
  * q = 1 + K·k, χ²(K²).
  * @param x n×K
- * @throws Issue "too-few-rows" | "exact-combination" | "singular-system" | "predicted-exactly"
+ * @throws Issue "too-few-rows" | "constant-series" | "exact-combination" | "singular-system" | "predicted-exactly"
  * Source: Tiao and Box (1981), JASA 76, 802–816
  */
 export function partialLags(x: Matrix, lags: number): PartialLag[] {
   const series = x[0].length;
   const settings = (order: number): ModelSettings => ({ ...plainShape(series), lags: allLags(order) });
   requireRows(settings(lags), { rows: x.length, series, drivers: 0 }, lags);
+  refuseExactSeries(x, settings(lags), 1);
   const steps = whittleRecursion(lagCovariances(x, [0, ...allLags(lags)]));
   const sample = { y: x, drivers: [], start: 1 };
   return allLags(lags).map((lag) => {

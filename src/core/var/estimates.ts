@@ -1,5 +1,6 @@
 import { studentQuantile, studentTwoSided } from "../distributions";
 import { coefficientRoots } from "./coefficient-covariance";
+import { refuseNoiseless } from "./exact";
 import type { VarModel } from "./model";
 import type { Regressor } from "./regressors";
 import type { Sample } from "./sample";
@@ -21,11 +22,12 @@ export interface CoefficientEstimate {
 /**
  * Every coefficient of a fitted model, equation by equation in block order, with standard error, Student t on
  * T − q degrees of freedom and limits that hold with the stated coverage.
- * @throws Issue "covariance-not-positive" when nothing is left to err by
+ * @throws Issue "nothing-left-over" | "covariance-not-positive"
  * Source: Lütkepohl (2005), 3.2.2
  */
 export function estimates(model: VarModel, sample: Sample, coverage: number): CoefficientEstimate[] {
   const stepped = stepSample(sample, model.settings.steps);
+  refuseNoiseless(model.noiseCovariance, stepped.y);
   const { inverseRoot, root } = coefficientRoots(model, stepped);
   const freedom = stepped.y.length - orderOf(model.settings) - model.regressors.length;
   const reach = studentQuantile((1 + coverage) / 2, freedom);

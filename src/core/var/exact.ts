@@ -4,6 +4,23 @@ import type { Matrix } from "../matrix";
 import type { Calendar } from "./settings";
 import { termNames, termRow } from "./terms";
 
+/** Residuals smaller than this beside their series are rounding, as are pivots of unit-length columns. */
+const ROUNDING = 1e-10;
+
+/**
+ * Refuses an equation that leaves nothing over: its tests would be of rounding.
+ * @param noise K×K innovation covariance
+ * @param y     n×K, the series on the scale of the fit
+ * @throws Issue "nothing-left-over"
+ */
+export function refuseNoiseless(noise: Matrix, y: Matrix): void {
+  const series = noise.findIndex((row, k) => {
+    const size = Math.sqrt(y.reduce((sum, now) => sum + now[k] ** 2, 0) / y.length);
+    return Math.sqrt(row[k]) < ROUNDING * size;
+  });
+  if (series >= 0) throw new Issue({ code: "nothing-left-over", series });
+}
+
 /**
  * Refuses series that are constant, or an exact combination of each other and the terms in the same row:
  * no joint model exists for them.

@@ -10,6 +10,15 @@ const WORK_LIMIT = 1.4e8;
 export const exceedsWork = (products: number): boolean => products > WORK_LIMIT / 5;
 
 /**
+ * Refuses a state so long that its eigenvalues and covariance would hold the page up; both cost about its cube.
+ * @throws Issue "too-many-states"
+ */
+export function requireStates(states: number): void {
+  const limit = Math.floor(Math.cbrt(WORK_LIMIT / 10));
+  if (states > limit) throw new Issue({ code: "too-many-states", states, limit });
+}
+
+/**
  * Refuses a fit that would hold the page up: the factor of T rows and q columns with K right-hand sides costs
  * about T·q·(q + K).
  * @param fits how many such fits the call asks for

@@ -158,6 +158,8 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
       : `The largest order it can carry is ${grouped(largest)}. Use fewer lags or more rows.`),
   "too-heavy": ({ rows, coefficients }) =>
     `This fit would hold up the sheet: ${plural(rows, "row")} with ${plural(coefficients, "coefficient")} per equation. Use waves for a long season, fewer lags, or fewer rows.`,
+  "too-many-states": ({ states, limit }) =>
+    `This model remembers ${grouped(states)} numbers, its series times its lags; at most ${grouped(limit)} can be worked out here. Use a shorter order or fewer series.`,
   "lags-beyond-rows": ({ lag, rows }) =>
     `Lag ${grouped(lag)} reaches beyond the ${plural(rows, "row")} of this range. Use lags up to ${grouped(rows - 1)}.`,
   "step-domain": ({ step, series, row, value }, wording) =>
@@ -170,6 +172,8 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `${relationWords(columns, wording)} exactly. ${relationRemedy(columns, wording)}`,
   "predicted-exactly": ({ order }) =>
     `At order ${order} some series is predicted without any error, so orders cannot be compared. Look for a series that is a shifted or scaled copy of others.`,
+  "nothing-left-over": ({ series }, wording) =>
+    `Series ${wording.series[series]} is predicted without any error, so its equation has nothing to test against. Look for a series that is a shifted or scaled copy of others.`,
   "singular-system": () =>
     "The equations for the coefficients have no single solution for these data. Look for series that repeat each other, or use fewer lags.",
   unstable: ({ modulus }) =>

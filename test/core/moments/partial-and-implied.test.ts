@@ -1,17 +1,21 @@
 import { describe, expect, it } from "vitest";
 import { impliedCovariances } from "../../../src/core/moments/implied-covariance";
 import { partialLags } from "../../../src/core/moments/partial-lag";
+import { impulseMatrices } from "../../../src/core/forecast/impulse";
+import { add, multiply, transpose } from "../../../src/core/linalg";
+import { compareOrders } from "../../../src/core/var/order";
 import { allLags } from "../../../src/core/var/settings";
 import { fitModel } from "../../../src/core/var/fit";
 import { lagMatrices } from "../../../src/core/var/lag-matrices";
 import { lagCovariances } from "../../../src/core/moments/lag-covariance";
 import { regressorsOf } from "../../../src/core/var/regressors";
-import type { Matrix } from "../../../src/core/matrix";
+import { identity, type Matrix } from "../../../src/core/matrix";
 import type { VarModel } from "../../../src/core/var/model";
+import hand from "../../reference/hand-cases.json";
 import { blockClose, close } from "../../support/close";
 import { frozen } from "../../support/frozen";
 import { inventedSeries } from "../../support/invented";
-import { sampleOf, settingsOfOrder } from "../../support/requests";
+import { plainShape, sampleOf, settingsOfOrder } from "../../support/requests";
 
 /** A model by its lag matrices and innovation covariance, no terms. */
 function modelOf(phi: readonly Matrix[], noiseCovariance: Matrix): VarModel {
@@ -37,13 +41,6 @@ describe("covariances that a model implies", () => {
     close(gamma[2], [[1 / 3, 1 / 9], [7 / 9, 20 / 27]]); // prettier-ignore
   });
 
-  it("Lütkepohl's VAR(2) example, to the three digits printed (2005, 2.1.4)", () => {
-    const phi = [[[0.5, 0.1], [0.4, 0.5]], [[0, 0], [0.25, 0]]]; // prettier-ignore
-    const gamma = impliedCovariances(modelOf(phi, [[0.09, 0], [0, 0.04]]), 1); // prettier-ignore
-    close(gamma[0].flat(), [0.131, 0.066, 0.066, 0.181], { atol: 0.0005 });
-    close(gamma[1].flat(), [0.072, 0.051, 0.104, 0.143], { atol: 0.0005 });
-  });
-
   it("of a Yule–Walker fit are those of the data up to the order", () => {
     const y = inventedSeries(120, 3);
     const settings = settingsOfOrder(3, 2, { fit: "yule-walker" });
@@ -60,6 +57,22 @@ describe("covariances that a model implies", () => {
     );
   });
 
+  it.each([
+    ["VAR(1)", [hand.B_luetkepohl_var1.A], hand.B_luetkepohl_var1],
+    ["VAR(2)", [hand.C_luetkepohl_var2.A1, hand.C_luetkepohl_var2.A2], hand.C_luetkepohl_var2],
+  ] as const)("Lütkepohl's %s as printed", (_, phi, { Sigma, Gamma0, Gamma1 }) => {
+    const gamma = impliedCovariances(frozen(modelOf(phi, Sigma)), 1);
+    // printed to three decimals
+    close(gamma[0], Gamma0, { atol: 0.0006, rtol: 0 });
+    close(gamma[1], Gamma1, { atol: 0.0006, rtol: 0 });
+  });
+
+  it("are refused where they would hold the page up, however large the block", () => {
+    const diagonal = identity(10).map((row) => row.map((v) => v / 50));
+    const long = modelOf(Array.from({ length: 40 }, () => diagonal), identity(10)); // prettier-ignore
+    expect(() => impliedCovariances(long, 1)).toThrow("too-many-states");
+  });
+
   it("are those of white noise at order 0, and do not exist when a root reaches 1", () => {
     expect(impliedCovariances(modelOf([], [[2, 1], [1, 3]]), 1)[1]).toEqual([[0, 0], [0, 0]]); // prettier-ignore
     expect(() => impliedCovariances(modelOf([[[1]]], [[1]]), 1)).toThrow("unstable");
@@ -69,7 +82,59 @@ describe("covariances that a model implies", () => {
   });
 });
 
+describe("with a moving average", () => {
+  const withPast = (phi: readonly Matrix[], theta: readonly Matrix[], sigma: Matrix): VarModel => {
+    const plain = modelOf(phi, sigma);
+    const settings = { ...plain.settings, movingAverage: theta.length };
+    return frozen({
+      ...plain,
+      settings,
+      regressors: regressorsOf(settings, plain.series, 0),
+      coefficients: [...plain.coefficients, ...theta.flatMap((m) => transpose(m))],
+    });
+  };
+
+  it("by hand: y = ½y(−1) + e + ⅖e(−1) has Γ(0) = 2.08, Γ(1) = ½Γ(0) + ⅖, Γ(2) = ½Γ(1)", () => {
+    const gamma = impliedCovariances(withPast([[[0.5]]], [[[0.4]]], [[1]]), 2).flat(2);
+    close(gamma, [2.08, 1.44, 0.72]);
+  });
+
+  it("by hand: a pure one of order 1 has Γ(0) = Σ + ΘΣΘᵀ, Γ(1) = ΘΣ, and nothing beyond", () => {
+    const gamma = impliedCovariances(withPast([], [[[0.5, 1], [0, 2]]], [[4, 1], [1, 2]]), 3); // prettier-ignore
+    close(gamma[0], [[8, 6], [6, 10]]); // prettier-ignore
+    close(gamma[1], [[3, 2.5], [2, 4]]); // prettier-ignore
+    expect(gamma.slice(2).flat(2)).toEqual(new Array(8).fill(0));
+  });
+
+  it("is Σ Ψ(i + k)ΣΨ(i)ᵀ summed until nothing is left, for orders p ≤ q and p > q", () => {
+    const phi: Matrix[] = [[[0.5, 0.1], [0.4, 0.3]], [[0.1, 0], [0.25, -0.2]], [[0, 0.1], [0, 0.1]]]; // prettier-ignore
+    const theta: Matrix[] = [[[0.4, 0], [-0.3, 0.2]], [[0, 0.3], [0.1, 0.5]]]; // prettier-ignore
+    for (const order of [1, 2, 3]) {
+      const model = withPast(phi.slice(0, order), theta, [[1, 0.4], [0.4, 2]]); // prettier-ignore
+      const psi = impulseMatrices(model, 600);
+      impliedCovariances(model, 5).forEach((gamma, k) => {
+        const terms = psi
+          .slice(0, 600 - k)
+          .map((m, i) => multiply(multiply(psi[i + k], model.noiseCovariance), transpose(m)));
+        blockClose(gamma, terms.reduce<Matrix>(add, [[0, 0], [0, 0]])); // prettier-ignore
+      });
+    }
+  });
+});
+
 describe("partial autoregression", () => {
+  it("tests as the table of orders does where both use the same rows", () => {
+    const y = inventedSeries(90, 3);
+    for (const { lag, statistic, p } of partialLags(y, 4)) {
+      const row = compareOrders({ y, drivers: [], start: 1 }, plainShape(3), lag)[lag];
+      close([statistic, p], [row.lr!, row.lrP!], { rtol: 1e-9 });
+    }
+  });
+
+  it("refuses a series that never changes", () => {
+    expect(() => partialLags(inventedSeries(40, 2).map(([a]) => [a, 5]), 1)).toThrow("constant-series"); // prettier-ignore
+  });
+
   it("at lag 1 and beyond is the last matrix of the Yule–Walker fit", () => {
     const y = frozen(inventedSeries(90, 3));
     for (const { lag, matrix } of partialLags(y, 3)) {

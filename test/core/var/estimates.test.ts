@@ -8,6 +8,7 @@ import { fittedLevels, residualRows } from "../../../src/core/var/one-step-level
 import { leastSquares } from "../../../src/core/var/least-squares";
 import { fUpper } from "../../../src/core/distributions";
 import reference from "../../reference/statsmodels-var.json";
+import single from "../../reference/statsmodels-coefficients.json";
 import lutkepohl from "../../reference/lutkepohl-e1.json";
 import { blockClose, close } from "../../support/close";
 import { readCsv } from "../../support/data";
@@ -15,6 +16,8 @@ import { frozen } from "../../support/frozen";
 import { inventedSeries } from "../../support/invented";
 import { sampleOf, settingsOfOrder } from "../../support/requests";
 
+const macro = sampleOf(readCsv("macrodata.csv", ["realgdp", "realcons", "realinv"]));
+const danish = sampleOf(readCsv("danish_johansen_juselius_1990.csv", ["lrm", "lry", "ibo", "ide"]));
 const y = frozen(inventedSeries(70, 3));
 const logDiff = Array.from({ length: 3 }, () => [
   { kind: "log" } as const,
@@ -23,6 +26,13 @@ const logDiff = Array.from({ length: 3 }, () => [
 const german = sampleOf(
   readCsv("e1_west_german_inv_inc_cons_1960Q1_1982Q4.csv", ["invest", "income", "cons"]).slice(0, 76),
 );
+
+/** The data and settings of a reference case. */
+const studied = ({ set, order }: { readonly set: string; readonly order: number }) => {
+  if (set === "german") return { sample: german, settings: settingsOfOrder(3, order, { steps: logDiff }) };
+  if (set === "macro") return { sample: macro, settings: settingsOfOrder(3, order, { steps: logDiff }) };
+  return { sample: danish, settings: settingsOfOrder(4, order) };
+};
 
 describe("estimates", () => {
   it("standard errors are √((ZᵀZ)⁻¹ ⊗ Σ) by the normal equations", () => {
@@ -55,8 +65,27 @@ describe("estimates", () => {
       lutkepohl.coef.flat(),
       { rtol: 1e-9 },
     );
-    // Student t, 66 degrees of freedom, 95 % point: 1.668271 (R qt(0.95, 66), from memory of the usual table, 6 digits)
-    for (const { low, high, error } of rows) close((high - low) / 2 / error, 1.668271, { rtol: 1e-6 });
+  });
+
+  it.each(single.cases)("is the table of single regressions by statsmodels: $name", (expected) => {
+    const { sample, settings } = studied(expected);
+    const rows = estimates(fitModel({ sample, plan: { kind: "fit", settings } }), sample, expected.coverage);
+    close(rows.map(({ coefficient }) => coefficient), expected.coefficients.flat(), { rtol: 1e-8 }); // prettier-ignore
+    close(rows.map(({ error }) => error), expected.errors.flat(), { rtol: 1e-9 }); // prettier-ignore
+    close(rows.map(({ t }) => t), expected.t.flat(), { rtol: 1e-8 }); // prettier-ignore
+    close(rows.map(({ p }) => p), expected.p.flat(), { rtol: 1e-7 }); // prettier-ignore
+    close(rows.map(({ low }) => low), expected.low.flat(), { rtol: 1e-7 }); // prettier-ignore
+    close(rows.map(({ high }) => high), expected.high.flat(), { rtol: 1e-7 }); // prettier-ignore
+  });
+
+  it("do not exist for an equation that leaves nothing over", () => {
+    const copied = sampleOf(y.map(([a], t) => [a, t === 0 ? 9 : y[t - 1][0]]));
+    for (const terms of ["constant", "none"] as const) {
+      const settings = settingsOfOrder(2, 1, { terms });
+      const model = fitModel({ sample: copied, plan: { kind: "fit", settings } });
+      expect(() => estimates(model, copied, 0.95)).toThrow("nothing-left-over");
+      expect(() => grangerPValues(copied, settings, 0)).toThrow("nothing-left-over");
+    }
   });
 });
 
@@ -117,6 +146,37 @@ describe("Granger's question", () => {
       const [rss, rss0] = [squares(full, effect), squares(restricted, effect)];
       close(p[effect][cause], fUpper((rss0 - rss) / 2 / (rss / (68 - 7)), 2, 68 - 7), { rtol: 1e-8 });
     }
+  });
+
+  it.each(single.cases)("agrees with F tests of single regressions by statsmodels: $name", (expected) => {
+    const { sample, settings } = studied(expected);
+    const off = (p: readonly (readonly (number | null)[])[]) =>
+      p.map((row, i) => row.filter((_, j) => j !== i) as number[]);
+    close(off(grangerPValues(sample, settings, 0)), off(expected.granger), { rtol: 1e-7 });
+    // fitted at order p + d, tested at the first p lags
+    close(off(grangerPValues(sample, settings, expected.spare)), off(expected.grangerSpare), { rtol: 1e-7 });
+  });
+
+  it("tests just the lags used, the spare ones beyond the order", () => {
+    const settings = settingsOfOrder(3, 4, { lags: [1, 4] });
+    const p = grangerPValues(sampleOf(y), settings, 1);
+    const full = designOf({ y, drivers: [], start: 1 }, { ...settings, lags: [1, 4, 5] }, 5);
+    const keep = full.regressors.flatMap((r, at) =>
+      r.kind === "lag" && r.series === 0 && r.lag !== 5 ? [] : [at],
+    );
+    const squares = (z: typeof full.z) =>
+      leastSquares({ ...full, z, regressors: z[0].map(() => full.regressors[0]) }).residuals.reduce(
+        (sum, row) => sum + row[1] ** 2,
+        0,
+      );
+    const [rss, rss0] = [squares(full.z), squares(full.z.map((row) => keep.map((at) => row[at])))];
+    close(p[1][0], fUpper((rss0 - rss) / 2 / (rss / (65 - 10)), 2, 65 - 10), { rtol: 1e-8 });
+  });
+
+  it("refuses a series that never changes, with terms or without", () => {
+    const constant = sampleOf(y.map(([a]) => [a, 5]));
+    for (const terms of ["constant", "none"] as const)
+      expect(() => grangerPValues(constant, settingsOfOrder(2, 1, { terms }), 0)).toThrow("constant-series");
   });
 
   it("sees that each invented series leads the next, and not the other way round", () => {
