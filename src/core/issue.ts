@@ -49,7 +49,14 @@ export type IssueFacts =
       readonly row: number;
       readonly found: string;
     }
-  | { readonly code: "gap"; readonly range: string; readonly name: string; readonly row: number }
+  | {
+      readonly code: "gap";
+      readonly range: string;
+      readonly name: string;
+      readonly row: number;
+      /** Whether the call can be told to allow gaps. */
+      readonly allowable: boolean;
+    }
   | { readonly code: "blank-series"; readonly name: string }
   | { readonly code: "header-number"; readonly range: string; readonly column: number; readonly text: string }
   | { readonly code: "header-twice"; readonly range: string; readonly name: string }
@@ -76,6 +83,10 @@ export type IssueFacts =
   | { readonly code: "option-needs"; readonly key: string; readonly needs: string }
   | { readonly code: "fit-without-drivers"; readonly fit: string }
   | { readonly code: "fit-all-lags"; readonly fit: string }
+  | { readonly code: "longrun-needs-lag" }
+  | { readonly code: "longrun-errors"; readonly call: string }
+  | { readonly code: "ma-not-here"; readonly call: string }
+  | { readonly code: "gaps-not-here"; readonly call: string }
   | { readonly code: "options-clash"; readonly key: string; readonly other: string }
   | {
       readonly code: "option-against-block";
@@ -119,6 +130,8 @@ export type IssueFacts =
   | { readonly code: "predicted-exactly"; readonly order: number }
   | { readonly code: "nothing-left-over"; readonly series: number }
   | { readonly code: "singular-system" }
+  | { readonly code: "likelihood-stuck"; readonly reason: "ma-root" | "ar-root" | "flat" }
+  | { readonly code: "gaps-too-many" }
   | { readonly code: "unstable"; readonly modulus: number }
   | { readonly code: "no-lags" }
   | { readonly code: "needs-two-series" }

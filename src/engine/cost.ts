@@ -1,7 +1,7 @@
 import type { BandsRequest } from "../core/forecast/bands";
 import { weighingWork, type WhatIfRequest } from "../core/forecast/what-if";
 import type { TaskName } from "../core/tasks";
-import type { ModelPlan, ModelRequest } from "../core/var/sample";
+import { shapeOf, type ModelPlan, type ModelRequest } from "../core/var/sample";
 import { regressorCount } from "../core/var/regressors";
 
 /** Products in a millisecond of fitting samples anew: least squares is laid out for it, other fits are not. */
@@ -21,7 +21,8 @@ const UNNOTICED_MILLISECONDS = 40;
 export function isHeavy(task: TaskName, request: unknown): boolean {
   const { plan, sample } = request as Partial<ModelRequest>;
   if (plan === undefined || sample === undefined) return false;
-  if (fitOf(plan) === "likelihood") return plan.kind !== "given";
+  const { fit } = shapeOf(plan);
+  if (fit === "likelihood" && plan.kind !== "given") return true;
   const series = sample.series[0].length;
   if (task === "whatIf") {
     const { imposed } = request as WhatIfRequest;
@@ -30,14 +31,13 @@ export function isHeavy(task: TaskName, request: unknown): boolean {
   }
   if (task !== "bands") return false;
   const { bands, draws } = request as BandsRequest;
+  // the errors of its coefficients are differences of the likelihood all around
+  if (fit === "likelihood" && bands === "fitted") return true;
   if (bands !== "redrawn") return false;
   const q = coefficientsOf(plan, series, sample.drivers[0]?.length ?? 0);
-  const speed = PER_MILLISECOND[fitOf(plan) === "least-squares" ? "least-squares" : "other"];
+  const speed = PER_MILLISECOND[fit === "least-squares" ? "least-squares" : "other"];
   return (draws * sample.series.length * q * (q + series)) / speed > UNNOTICED_MILLISECONDS;
 }
-
-const fitOf = (plan: ModelPlan) =>
-  plan.kind === "given" ? plan.model.settings.fit : plan.kind === "fit" ? plan.settings.fit : plan.shape.fit;
 
 /** An automatic order is taken as two. */
 const coefficientsOf = (plan: ModelPlan, series: number, drivers: number): number => {

@@ -20,7 +20,8 @@ export interface SeriesSurvey {
   readonly problems: readonly IssueFacts[];
 }
 
-export type Gaps = "refuse" | "allow";
+/** What becomes of a blank cell: refused, refused with the hint that the call can allow it, or allowed. */
+export type Gaps = "refuse" | "offer" | "allow";
 
 /**
  * Reads a range of series: header, names, numbers, gaps.
@@ -92,7 +93,8 @@ export function readHeader(row: readonly Cell[], range: string): { names: string
 
 export function cellProblem(cell: Cell, gaps: Gaps, range: string, name: string, row: number): IssueFacts[] {
   if (typeof cell === "number") return [];
-  if (isBlank(cell)) return gaps === "allow" ? [] : [{ code: "gap", range, name, row }];
+  if (isBlank(cell))
+    return gaps === "allow" ? [] : [{ code: "gap", range, name, row, allowable: gaps === "offer" }];
   return [{ code: "not-a-number-cell", range, name, row, found: describeCell(cell) }];
 }
 

@@ -20,6 +20,8 @@ const NOT_AVAILABLE: ReadonlySet<IssueCode> = new Set<IssueCode>([
   "predicted-exactly",
   "nothing-left-over",
   "singular-system",
+  "likelihood-stuck",
+  "gaps-too-many",
   "covariance-not-positive",
   "unstable",
   "no-lags",

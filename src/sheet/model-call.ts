@@ -1,7 +1,8 @@
-import type { ModelRequest } from "../core/var/sample";
+import { Issue } from "../core/issue";
+import type { ModelPlan, ModelRequest } from "../core/var/sample";
 import type { Wording } from "../texts/en";
 import type { RawArguments } from "./call";
-import { readDrivers, readSeries, type DriverBlock, type SeriesBlock } from "./grid";
+import { readDrivers, readSeries, type DriverBlock, type Gaps, type SeriesBlock } from "./grid";
 import type { Names } from "./labels";
 import { planModel, readModelArgument, startOf, type BlockUse } from "./model-plan";
 import type { OptionKey } from "./option-specs";
@@ -24,6 +25,16 @@ export const wordingOf = (series: SeriesBlock, drivers: readonly string[] = []):
   firstRow: series.firstRow,
 });
 
+const gapsOf = (options: Options, keys: readonly OptionKey[]): Gaps =>
+  options.gaps === "allow" ? "allow" : keys.includes("gaps") ? "offer" : "refuse";
+
+/** Only likelihood fits with gaps; a block's numbers can be used whatever they come from. @throws Issue "option-needs" */
+function requireLikelihood(plan: ModelPlan): void {
+  if (plan.kind === "given") return;
+  const { fit } = plan.kind === "fit" ? plan.settings : plan.shape;
+  if (fit !== "likelihood") throw new Issue({ code: "option-needs", key: "gaps", needs: "fit=likelihood" });
+}
+
 /**
  * Reads the arguments that every call with a model shares.
  * @param keys   the option keys of the call
@@ -44,12 +55,13 @@ export function readModelCall(
     use: BlockUse | ((options: Options) => BlockUse);
   },
 ): ModelCall {
-  const series = readSeries(args["series"]);
   const options = readOptions(args["options"], call, keys);
+  const series = readSeries(args["series"], "series", gapsOf(options, keys));
   const drivers = readDrivers(args["drivers"], series, future);
   const argument = readModelArgument(args["model"]);
   const blockUse = typeof use === "function" ? use(options) : use;
   const plan = planModel(argument, options, { series, drivers }, blockUse);
+  if (options.gaps === "allow") requireLikelihood(plan);
   return {
     series,
     drivers,

@@ -4,6 +4,7 @@ import {
   allLags,
   DEFAULT_FADE,
   DEFAULT_PULL,
+  isInside,
   isSubset,
   orderOf,
   type FitMethod,
@@ -28,6 +29,8 @@ export const SETTING_KEYS = [
   "waves",
   "uselags",
   "steps",
+  "longrun",
+  "ma",
   "pull",
   "fade",
 ] as const satisfies readonly OptionKey[];
@@ -108,9 +111,8 @@ export function planModel(
   if (options.uselags && options.uselags.at(-1) !== order) {
     throw new Issue({ code: "options-clash", key: "uselags", other: "order" });
   }
-  if (options.uselags && isSubset(options.uselags) && shape.fit === "nuttall-strand") {
-    throw new Issue({ code: "fit-all-lags", fit: shape.fit });
-  }
+  if (options.uselags && isSubset(options.uselags)) refuseSubset(shape);
+  if (shape.longRun !== null && order === 0) throw new Issue({ code: "longrun-needs-lag" });
   if (options.uselags) return { kind: "fit", settings: { ...shape, lags: options.uselags } };
   requireOrder(shape, order, extentOf(shape, series, drivers));
   return { kind: "fit", settings: { ...shape, lags: allLags(order) } };
@@ -131,22 +133,41 @@ export function readShape(options: Options, series: number): Shape {
       allowed: { kind: "whole", from: 1, to },
     });
   }
-  for (const key of ["pull", "fade"] as const) {
-    if (options[key] !== undefined && options.fit !== "shrinkage") {
-      throw new Issue({ code: "option-needs", key, needs: "fit=shrinkage" });
-    }
-  }
+  const fit = options.fit ?? "least-squares";
+  const terms = options.terms ?? "constant";
+  const needs = (key: OptionKey, wanted: boolean, beside: string) => {
+    if (wanted) throw new Issue({ code: "option-needs", key, needs: beside });
+  };
+  for (const key of ["pull", "fade"] as const)
+    needs(key, options[key] !== undefined && fit !== "shrinkage", "fit=shrinkage");
+  needs("ma", (options.ma ?? 0) > 0 && fit !== "likelihood", "fit=likelihood");
+  const longRun = options.longrun ?? null;
+  needs("longrun", longRun !== null && fit !== "least-squares", "fit=least-squares");
+  needs("terms", isInside(terms) && longRun === null, "longrun");
+  if (longRun !== null && longRun > series)
+    throw new Issue({
+      code: "bad-option",
+      key: "longrun",
+      found: String(longRun),
+      allowed: { kind: "whole", from: 0, to: series },
+    });
   return {
-    fit: options.fit ?? "least-squares",
-    terms: options.terms ?? "constant",
+    fit,
+    terms,
     cycle,
     waves,
     steps: readPlan(options.steps ?? [[]], series),
-    longRun: null,
-    movingAverage: 0,
+    longRun,
+    movingAverage: options.ma ?? 0,
     pull: options.pull ?? DEFAULT_PULL,
     fade: options.fade ?? DEFAULT_FADE,
   };
+}
+
+/** @throws Issue "fit-all-lags" where lags cannot be left out */
+function refuseSubset({ fit, longRun }: Shape): void {
+  if (longRun !== null) throw new Issue({ code: "fit-all-lags", fit: "longrun" });
+  if (fit === "nuttall-strand") throw new Issue({ code: "fit-all-lags", fit });
 }
 
 /** What is there to fit on once the steps have used up their rows. @throws Issue "steps-leave-nothing" */
@@ -189,6 +210,8 @@ function refuseContradiction(options: Options, settings: ModelSettings, series: 
     waves: String(settings.waves ?? "none"),
     uselags: settings.lags.join(" "),
     steps: formatSteps(settings.steps),
+    longrun: String(settings.longRun ?? "none"),
+    ma: String(settings.movingAverage),
     pull: String(settings.pull),
     fade: String(settings.fade),
   };

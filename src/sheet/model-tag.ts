@@ -5,6 +5,7 @@ import {
   allLags,
   DEFAULT_FADE,
   DEFAULT_PULL,
+  isInside,
   isSubset,
   orderOf,
   type ModelSettings,
@@ -35,6 +36,8 @@ export function settingsText(settings: ModelSettings): string {
   if (settings.waves !== null) parts.push(`waves=${settings.waves}`);
   if (isSubset(settings.lags)) parts.push(`uselags=${settings.lags.join(" ")}`);
   if (settings.steps.some((list) => list.length > 0)) parts.push(`steps=${formatSteps(settings.steps)}`);
+  if (settings.longRun !== null) parts.push(`longrun=${settings.longRun}`);
+  if (settings.movingAverage > 0) parts.push(`ma=${settings.movingAverage}`);
   if (settings.fit === "shrinkage") parts.push(`pull=${settings.pull}`, `fade=${settings.fade}`);
   return parts.join("; ");
 }
@@ -77,14 +80,20 @@ export function parseTag(text: string): Tag {
     : allLags(order);
   if ((lags.at(-1) ?? 0) !== order) throw bad("uselags");
   const fit = read("fit", option("fit")) as ModelSettings["fit"];
-  if (fit === "nuttall-strand" && isSubset(lags)) throw bad("uselags");
+  const longRun = given.has("longrun") ? read("longrun", option("longrun")) : null;
+  if ((fit === "nuttall-strand" || longRun !== null) && isSubset(lags)) throw bad("uselags");
+  if (longRun !== null && (fit !== "least-squares" || order === 0 || longRun > series)) throw bad("longrun");
+  const movingAverage = read("ma", OPTIONS.ma.parse, 0);
+  if (movingAverage > 0 && fit !== "likelihood") throw bad("ma");
+  const terms = read("terms", option("terms")) as ModelSettings["terms"];
+  if (isInside(terms) && longRun === null) throw bad("terms");
   const cycle = given.has("cycle") ? read("cycle", option("cycle")) : null;
   const waves = given.has("waves") ? read("waves", option("waves")) : null;
   if (waves !== null && (cycle === null || waves > cycle / 2)) throw bad("waves");
   return {
     settings: {
       fit,
-      terms: read("terms", option("terms")) as ModelSettings["terms"],
+      terms,
       cycle,
       waves,
       steps: read(
@@ -95,8 +104,8 @@ export function parseTag(text: string): Tag {
         },
         spreadSteps([[]], series)!,
       ),
-      longRun: null,
-      movingAverage: 0,
+      longRun,
+      movingAverage,
       pull: read("pull", OPTIONS.pull.parse, DEFAULT_PULL),
       fade: read("fade", OPTIONS.fade.parse, DEFAULT_FADE),
       lags,

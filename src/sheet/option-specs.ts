@@ -18,6 +18,10 @@ export interface OptionValues {
   readonly uselags: readonly number[] | null;
   /** As written: one list, or one per series. */
   readonly steps: StepPlan;
+  /** Long-run relations, null for an unrestricted fit. */
+  readonly longrun: number | null;
+  readonly ma: number;
+  readonly gaps: "refuse" | "allow";
   readonly pull: number;
   readonly fade: number;
   readonly criterion: Criterion;
@@ -111,13 +115,16 @@ const stepLists: OptionSpec<StepPlan> = {
 
 /** Every option there is. Which of them apply is stated at each call. */
 export const OPTIONS: { readonly [K in OptionKey]: OptionSpec<OptionValues[K]> } = {
-  fit: choice("least-squares", "yule-walker", "nuttall-strand", "shrinkage"),
-  terms: choice("constant", "none", "trend", "quadratic"),
+  fit: choice("least-squares", "yule-walker", "nuttall-strand", "likelihood", "shrinkage"),
+  terms: choice("constant", "none", "trend", "quadratic", "inside-constant", "inside-trend"),
   cycle: orNone(whole(2, 100_000)),
   waves: orNone(whole(1)),
   start: whole(1, 10_000_000),
   uselags: orNone(lagList, "all"),
   steps: stepLists,
+  longrun: orNone(whole(0)),
+  ma: whole(0, 1000),
+  gaps: choice("refuse", "allow"),
   pull: between(0, null),
   fade: from(0),
   criterion: choice("aicc", "aic", "bic", "hq"),

@@ -38,7 +38,15 @@ const BUG_WORDS = "failed on something it should have handled";
 // two are promised; five leave room for a machine that is busy with the other tests
 const SECONDS = 5;
 
-const FITS = ["least-squares", "yule-walker", "nuttall-strand", "likelihood", "shrinkage"];
+const FITS = [
+  "least-squares",
+  "yule-walker",
+  "nuttall-strand",
+  "likelihood",
+  "likelihood; ma=1",
+  "shrinkage",
+  "least-squares; longrun=1",
+];
 const TERMS = ["constant", "none", "trend", "constant; cycle=4; waves=1; steps=diff"];
 const driver = [["rain"], ...Array.from({ length: 90 }, (_, t) => [Math.sin(t * t)])];
 

@@ -109,7 +109,7 @@ describe("readSeries", () => {
     ["a name twice", [["a", "a"], [1, 2]], { code: "header-twice", range: "series", name: "a" }],
     ["a name left out", [["a", null], [1, 2]], { code: "header-blank", range: "series", column: 2 }],
     ["a blank series", [["a", "b"], [1, null], [2, null]], { code: "blank-series", name: "b" }],
-    ["a gap", [["a", "b"], [1, 2], [3, null], [5, 6]], { code: "gap", range: "series", name: "b", row: 3 }],
+    ["a gap", [["a", "b"], [1, 2], [3, null], [5, 6]], { code: "gap", range: "series", name: "b", row: 3, allowable: false }],
     ["an error", [[1], [{ type: "Error", basicValue: "#N/A" }]], { code: "not-a-number-cell", range: "series", name: "y1", row: 2, found: "the error #N/A" }],
     ["a text number", [["a"], ["12"], [3]], { code: "not-a-number-cell", range: "series", name: "a", row: 2, found: "text '12'" }],
   ])("refuses %s", (_, raw, facts) => expect(refusal(() => readSeries(raw))).toEqual(facts)); // prettier-ignore
@@ -140,7 +140,7 @@ describe("readDrivers", () => {
 
   it.each<[string, unknown, IssueFacts]>([
     ["too few rows ahead", [["x"], [9], [10], [20], [30]], { code: "drivers-short", have: 3, need: 5, future: 2 }],
-    ["a gap", [["x"], [9], [10], [null], [30], [40], [50]], { code: "gap", range: "drivers", name: "x", row: 4 }],
+    ["a gap", [["x"], [9], [10], [null], [30], [40], [50]], { code: "gap", range: "drivers", name: "x", row: 4, allowable: false }],
     ["a text", [["x"], [9], [10], [20], ["?"], [40], [50]], { code: "not-a-number-cell", range: "drivers", name: "x", row: 5, found: "text '?'" }],
     ["a name that is a number", [["7"], [9], [10], [20]], { code: "header-number", range: "drivers", column: 1, text: "7" }],
   ])("refuses %s", (_, raw, facts) => expect(refusal(() => readDrivers(raw, series, 2))).toEqual(facts)); // prettier-ignore

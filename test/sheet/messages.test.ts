@@ -28,7 +28,17 @@ const examples: readonly IssueFacts[] = [
   { code: "missing-argument", argument: "lags" },
   { code: "not-a-number-cell", range: "series", name: "price", row: 14, found: "text 'n/a'" },
   { code: "not-a-number-cell", range: "drivers", name: "rain", row: 14, found: "the error #N/A" },
-  { code: "gap", range: "series", name: "price", row: 14 },
+  { code: "gap", range: "series", name: "price", row: 14, allowable: false },
+  { code: "gap", range: "series", name: "price", row: 14, allowable: true },
+  { code: "longrun-needs-lag" },
+  { code: "longrun-errors", call: "BANDS" },
+  { code: "longrun-errors", call: "ESTIMATES" },
+  { code: "ma-not-here", call: "GRANGER" },
+  { code: "gaps-not-here", call: "bands=fitted" },
+  { code: "likelihood-stuck", reason: "ma-root" },
+  { code: "likelihood-stuck", reason: "ar-root" },
+  { code: "likelihood-stuck", reason: "flat" },
+  { code: "gaps-too-many" },
   { code: "blank-series", name: "price" },
   { code: "header-number", range: "series", column: 2, text: "2024" },
   { code: "header-twice", range: "series", name: "price" },
@@ -186,8 +196,8 @@ describe("single messages", () => {
     const text = wordIssue({ code: "block-names", block: long, series: long }, { ...wording, series: long });
     expect(text.length).toBeLessThanOrEqual(255);
     expect(text).toContain("…");
-    const cell = wordIssue({ code: "gap", range: "series", name: long[0], row: 14 });
-    expect(cell).toMatch(/… ?, row 14 is blank\. Fill it or shorten the range\.$/);
+    const cell = wordIssue({ code: "gap", range: "series", name: long[0], row: 14, allowable: true });
+    expect(cell).toMatch(/… ?, row 14 is blank\. Fill it, shorten the range, or set gaps=allow with fit=likelihood\.$/);
     const columns = long.map((_, series) => ({ column: { kind: "series", series } as const, weight: series - 3.5 }));
     expect(wordIssue({ code: "exact-combination", columns }, { ...wording, series: long })).toMatch(/^.{40,255}\.$/);
   }); // prettier-ignore
@@ -205,7 +215,7 @@ describe("the two errors", () => {
   it("a refused argument is a value error, a result that does not exist is not available", () => {
     const codes = (kind: string) => new Set(examples.filter((f) => kindOf(f) === kind).map(({ code }) => code));
     expect([...codes("not-available")].sort()).toEqual([
-      "block-needs-rows", "cancelled", "constant-series", "covariance-not-positive", "exact-combination", "needs-two-series", "no-lags",
+      "block-needs-rows", "cancelled", "constant-series", "covariance-not-positive", "exact-combination", "gaps-too-many", "likelihood-stuck", "needs-two-series", "no-lags",
       "not-in-preview", "nothing-left-over", "plan-singular", "predicted-exactly", "redraws-fail", "singular-system", "start-needed", "steps-leave-nothing",
       "too-few-rows", "too-large", "unstable",
     ]);

@@ -57,6 +57,14 @@ export const examples = {
       says: "An automatic order with a yearly wave.",
     },
     { formula: '=COMOVE.MODEL(B4:E160,2,"fit=shrinkage; pull=0.1")', says: "Two lags, held close to zero." },
+    {
+      formula: '=COMOVE.MODEL(B4:E160,2,"longrun=1; terms=inside-constant")',
+      says: "One long-run relation among the levels.",
+    },
+    {
+      formula: '=COMOVE.MODEL(B4:C160,1,"fit=likelihood; ma=1; gaps=allow")',
+      says: "Likelihood with a moving average; blank cells would be passed over.",
+    },
   ],
   ORDER: [{ formula: "=COMOVE.ORDER(B4:E160,6)", says: "Orders 0 to 6 side by side." }],
   PARTIALLAG: [{ formula: "=COMOVE.PARTIALLAG(B4:E160,6)", says: "Lags 1 to 6, each with its test." }],

@@ -3,14 +3,22 @@
  * @type {readonly (readonly [key: string, values: string, meaning: string])[]}
  */
 export const options = [
-  ["fit", "least-squares, yule-walker, nuttall-strand, shrinkage", "how the coefficients are estimated"],
+  [
+    "fit",
+    "least-squares, yule-walker, nuttall-strand, likelihood, shrinkage",
+    "how the coefficients are estimated",
+  ],
   [
     "pull",
     "0.2, any number above 0",
     "shrinkage: how far lags may stray from zero (the own first lag from one)",
   ],
   ["fade", "1, any number from 0", "shrinkage: how much less with every further lag"],
-  ["terms", "constant, none, trend, quadratic", "what every equation holds beside the lags"],
+  [
+    "terms",
+    "constant, none, trend, quadratic, inside-constant, inside-trend",
+    "what every equation holds beside the lags; the inside ones stand within long-run relations only",
+  ],
   ["cycle", "none, or rows in a season", "a season by indicators, or by waves"],
   ["waves", "none, or 1 to half a cycle", "pairs of sine and cosine that carry the season"],
   ["start", "1", "position of the first row, for windows that move"],
@@ -19,6 +27,17 @@ export const options = [
     "steps",
     "none, or log, sqrt, diff, diff 12 …",
     "done before fitting and undone after, separated by commas; a bar separates the series",
+  ],
+  [
+    "longrun",
+    "none, or 0 to the number of series",
+    "long-run relations that tie the series together in levels (Johansen)",
+  ],
+  ["ma", "0, or a number of lags", "fit=likelihood: past innovations in every equation, a moving average"],
+  [
+    "gaps",
+    "refuse, allow",
+    "fit=likelihood: blank cells are passed over and all others used; belongs to the call, not to the block",
   ],
   ["criterion", "aicc, aic, bic, hq", "what decides an automatic order"],
   ["maxorder", "by the number of rows", "the largest order looked at"],

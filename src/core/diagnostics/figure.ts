@@ -11,6 +11,8 @@ export type Gap =
   /** The model has no lags, or no coefficients. */
   | "no-lags"
   | "no-coefficients"
+  /** The test is one of regressions, and a moving average is none. */
+  | "moving-average"
   /** The distribution is tabulated neither here nor so far out. */
   | "untabulated";
 

@@ -11,7 +11,7 @@ import { stepSample } from "../var/stepped";
 import { archLags, archTest } from "./arch";
 import { breuschGodfrey } from "./breusch-godfrey";
 import { changeTests } from "./change";
-import type { Figure } from "./figure";
+import { missing, type Figure } from "./figure";
 import { ljungBox } from "./ljung-box";
 import { normality } from "./normality";
 import { portmanteau } from "./portmanteau";
@@ -72,9 +72,10 @@ export function residualTests(model: VarModel, sample: Sample, testLags: readonl
   });
   const each = Array.from({ length: series }, (_, k) => k);
   const together = portmanteau(u, lags.portmanteau, fittedFreedom(settings, series));
-  const past = breuschGodfrey(u, z, lags.lm);
+  const moving = settings.movingAverage > 0 ? missing("moving-average") : null;
+  const past = moving ? { lm: moving, f: moving } : breuschGodfrey(u, z, lags.lm);
   const shape = normality(u, z[0].length);
-  const change = changeTests(u, z);
+  const change = moving ? each.map(() => moving) : changeTests(u, z);
   const use = fitToUse(model, z);
   return [
     row({ question: "predict", method: "portmanteau" }, together.plain),

@@ -1,12 +1,9 @@
 import type { Matrix } from "../matrix";
-import { integratePath, powerOf, undoPower, type StepPlan } from "../prepare/steps";
+import { powerOf, undoPower, type StepPlan } from "../prepare/steps";
 import { fitModel } from "../var/fit";
 import type { VarModel } from "../var/model";
 import type { ModelRequest, Sample } from "../var/sample";
-import { stepSample } from "../var/stepped";
-import { pathDeviations } from "./deviations";
-import { requireFinite } from "./finite";
-import { forecastPath } from "./path";
+import { levelForecast } from "./level-forecast";
 
 /** With a log or square root the middle and the mean of the forecast differ. */
 export type Point = "median" | "mean";
@@ -31,10 +28,9 @@ export function forecastAhead(
 /** The point forecast of a model in original units. */
 export function pointForecast(model: VarModel, sample: Sample, horizon: number, point: Point): Matrix {
   const { steps } = model.settings;
-  const { forecast } = forecastPath(model, stepSample(sample, steps), horizon);
-  const level = integratePath(sample.series, steps, forecast);
+  const { level, deviations } = levelForecast(model, sample, horizon);
   if (point === "median" || steps.every((list) => powerOf(list) === null)) return toMedian(level, steps);
-  return toMean(level, requireFinite(pathDeviations(model, horizon)), steps);
+  return toMean(level, deviations(), steps);
 }
 
 /** Back through log and square root: the middle of the distribution. */

@@ -1,16 +1,13 @@
 import { normalQuantile } from "../distributions";
 import type { Matrix } from "../matrix";
-import { integratePath } from "../prepare/steps";
-import { coefficientRoots } from "../var/coefficient-covariance";
 import { fitModel } from "../var/fit";
 import type { VarModel } from "../var/model";
-import type { ModelPlan, ModelRequest } from "../var/sample";
+import { shapeOf, type ModelPlan, type ModelRequest } from "../var/sample";
 import { Issue } from "../issue";
-import { stepSample, type SteppedSample } from "../var/stepped";
 import { requireFinite } from "./finite";
 import { toMean, toMedian, type AheadRequest } from "./ahead";
-import { coefficientVariances, pathDeviations } from "./deviations";
-import { forecastPath } from "./path";
+import { coefficientSpread } from "./coefficient-spread";
+import { levelForecast } from "./level-forecast";
 import { redrawnBands } from "./redrawn-bands";
 
 /** Coefficients taken as known, their sampling error included, or the whole of it redrawn from the residuals. */
@@ -45,13 +42,11 @@ export function forecastBands(
   const model = fit({ sample, plan });
   if (request.bands === "redrawn") return redrawnBands(model, request);
   const { steps } = model.settings;
-  const stepped = stepSample(sample, steps);
-  const { forecast, regressors } = forecastPath(model, stepped, horizon);
-  const level = integratePath(sample.series, steps, forecast);
-  const known = pathDeviations(model, horizon);
-  const deviations = requireFinite(
-    request.bands === "known" ? known : withCoefficients(model, stepped, known, regressors),
-  );
+  const forecast = levelForecast(model, sample, horizon);
+  const { level } = forecast;
+  const known = forecast.deviations();
+  const deviations =
+    request.bands === "known" ? known : withSpread(known, coefficientSpread(model, sample, horizon));
   const miss = (1 - coverage) / (joint ? horizon * model.series : 1);
   const reach = -normalQuantile(miss / 2);
   const limit = (sign: number) =>
@@ -68,18 +63,10 @@ export function forecastBands(
 
 /** @throws Issue "redraw-fit" where fitting once is slow already */
 function refuseSlowRedraw(plan: ModelPlan): void {
-  const { fit } =
-    plan.kind === "fit" ? plan.settings : plan.kind === "auto" ? plan.shape : plan.model.settings;
+  const { fit } = shapeOf(plan);
   if (fit === "likelihood") throw new Issue({ code: "redraw-fit", fit });
 }
 
-/** Adds the coefficients' sampling error, its regressors Z taken from the range at hand. */
-function withCoefficients(
-  model: VarModel,
-  stepped: SteppedSample,
-  known: Matrix,
-  regressors: Matrix,
-): Matrix {
-  const extra = coefficientVariances(model, regressors, coefficientRoots(model, stepped));
-  return known.map((row, j) => row.map((v, k) => Math.hypot(v, Math.sqrt(extra[j][k]))));
-}
+/** Adds the coefficients' sampling error. */
+const withSpread = (known: Matrix, extra: Matrix): Matrix =>
+  requireFinite(known.map((row, j) => row.map((v, k) => Math.hypot(v, Math.sqrt(extra[j][k])))));

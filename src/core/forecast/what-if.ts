@@ -1,17 +1,17 @@
 import { Issue } from "../issue";
 import { factorColumns, inverseRoot, multiply, transpose } from "../linalg";
 import { column, zeros, type Matrix, type MutableMatrix } from "../matrix";
-import { applyPower, integratePath, powerOf } from "../prepare/steps";
+import { applyPower, powerOf } from "../prepare/steps";
 import { fitModel } from "../var/fit";
 import { innovationRoot } from "../var/innovation-root";
 import type { VarModel } from "../var/model";
 import type { ModelRequest } from "../var/sample";
-import { stepSample } from "../var/stepped";
+import { expectedLevels, hasGaps } from "../var/filtered";
 import { toMean, toMedian, type Point } from "./ahead";
 import { pathDeviations } from "./deviations";
 import { requireFinite } from "./finite";
 import { impulseMatrices, integrateEffects } from "./impulse";
-import { forecastPath } from "./path";
+import { levelForecast } from "./level-forecast";
 import { propagate } from "./propagate";
 
 export interface WhatIfRequest extends ModelRequest {
@@ -43,8 +43,8 @@ export function whatIf(request: WhatIfRequest, fit: (request: ModelRequest) => V
   const { sample, plan, imposed, point } = request;
   const model = fit({ sample, plan });
   const { steps } = model.settings;
-  const { forecast } = forecastPath(model, stepSample(sample, steps), imposed.length);
-  const level = integratePath(sample.series, steps, forecast);
+  if (hasGaps(sample)) return whatIfPastGaps(model, request);
+  const { level } = levelForecast(model, sample, imposed.length);
   const conditions = conditionsOf(imposed, level, model);
   const { basis, inverse } = weigh(model, conditions);
   const pulls = multiply(
@@ -57,10 +57,22 @@ export function whatIf(request: WhatIfRequest, fit: (request: ModelRequest) => V
     point === "median" || steps.every((list) => powerOf(list) === null)
       ? toMedian(moved, steps)
       : toMean(moved, spreadLeft(model, basis, imposed), steps);
-  return requireFinite(
-    back.map((row, j) => row.map((v, k) => (Number.isNaN(imposed[j][k]) ? v : imposed[j][k]))),
-  );
+  return asImposed(back, imposed);
 }
+
+/** With gaps what came before is uncertain too: the imposed cells are observed, and everything else expected given them. */
+function whatIfPastGaps(model: VarModel, { sample, imposed, point }: WhatIfRequest): Matrix {
+  const { steps } = model.settings;
+  conditionsOf(imposed, imposed, model);
+  const { expected, deviations } = expectedLevels(model, sample, imposed);
+  const level = expected.slice(-imposed.length);
+  const back =
+    point === "median" ? toMedian(level, steps) : toMean(level, deviations.slice(-imposed.length), steps);
+  return asImposed(back, imposed);
+}
+
+const asImposed = (path: Matrix, imposed: Matrix): Matrix =>
+  requireFinite(path.map((row, j) => row.map((v, k) => (Number.isNaN(imposed[j][k]) ? v : imposed[j][k]))));
 
 /** @throws Issue "plan-domain" where an imposed value has no log or square root */
 function conditionsOf(imposed: Matrix, level: Matrix, { settings }: VarModel): Condition[] {

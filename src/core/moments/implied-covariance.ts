@@ -1,23 +1,20 @@
-import { Issue } from "../issue";
+import { Issue, refuse } from "../issue";
 import { add, multiply, transpose } from "../linalg";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
+import { stationaryVariance } from "../state-space/stationary-variance";
 import { innovationRoot } from "../var/innovation-root";
 import { lagMatrices, movingAverageMatrices } from "../var/lag-matrices";
 import type { VarModel } from "../var/model";
 import { companionMatrix, largestRoot } from "../var/roots";
 import { orderOf } from "../var/settings";
 import { requireStates } from "../var/work";
-import { symmetric } from "./whittle";
-
-/** Doublings after which a sum of powers has settled even for a largest root of 1 − 1e-12. */
-const DOUBLINGS = 60;
 
 /**
  * Γ(0) … Γ(lags) that a model's numbers imply for the stepped series, Γ(k)[i][j] = Cov(i at t, j at t − k).
  * The state holds y(t) … y(t − r + 1), r the larger of p and q + 1, and the innovations of a moving average of
  * order q; P = F·P·Fᵀ + Q. Its first blocks are Γ(0) … Γ(r − 1), and Γ(k) = Σ_l Φ(l)Γ(k − l) beyond.
  * @throws Issue "unstable" | "too-many-states" | "covariance-not-positive" | "covariance-asymmetric"
- * Source: Lütkepohl (2005), (2.1.32), (2.1.36), 11.3.2; doubling after Anderson and Moore (1979), 6.7
+ * Source: Lütkepohl (2005), (2.1.32), (2.1.36), 11.3.2
  */
 export function impliedCovariances(model: VarModel, lags: number): Matrix[] {
   const k = model.series;
@@ -58,19 +55,5 @@ function stateCovariance(model: VarModel, remembered: number, noise: Matrix): Ma
     for (const column of enters)
       noise.forEach((values, i) => values.forEach((v, j) => (start[row + i][column + j] = v)));
   }
-  return stationaryCovariance(transition, start);
-}
-
-/** P = Σ_j F^j·Q·(F^j)ᵀ; each pass doubles the powers summed. */
-function stationaryCovariance(transition: Matrix, noise: Matrix): Matrix {
-  let sum = noise;
-  let power = transition;
-  for (let pass = 0; pass < DOUBLINGS; pass++) {
-    const next = symmetric(add(sum, multiply(multiply(power, sum), transpose(power))));
-    const settled = next.every((row, i) => row.every((v, j) => v === sum[i][j]));
-    sum = next;
-    if (settled) break;
-    power = multiply(power, power);
-  }
-  return sum;
+  return stationaryVariance(transition, start) ?? refuse({ code: "unstable", modulus: largestRoot(model) });
 }

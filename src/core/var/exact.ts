@@ -1,6 +1,6 @@
 import { Issue } from "../issue";
 import { factorColumns } from "../linalg";
-import type { Matrix } from "../matrix";
+import { column, type Matrix } from "../matrix";
 import type { Calendar } from "./settings";
 import { termNames, termRow } from "./terms";
 
@@ -21,19 +21,25 @@ export function refuseNoiseless(noise: Matrix, y: Matrix): void {
   if (series >= 0) throw new Issue({ code: "nothing-left-over", series });
 }
 
+const neverChanges = (values: readonly number[]): boolean => values.every((v) => v === values[0]);
+
 /**
  * Refuses series that are constant, or an exact combination of each other and the terms in the same row:
  * no joint model exists for them.
+ * Rows with gaps are left out.
  * @param y     n×K
  * @param start position of the first row
  * @throws Issue "constant-series" | "exact-combination"
  */
 export function refuseExactSeries(y: Matrix, calendar: Calendar, start: number): void {
-  const constant = y[0].findIndex((first, k) => y.every((row) => row[k] === first));
+  const constant = y[0].findIndex((_, k) => neverChanges(column(y, k).filter(Number.isFinite)));
   if (constant >= 0) throw new Issue({ code: "constant-series", series: constant });
   const terms = termNames(calendar);
-  if (y.length < terms.length + y[0].length) return;
-  const found = factorColumns(y.map((row, t) => [...termRow(calendar, start + t), ...row]));
+  const whole = y.flatMap((row, t) =>
+    row.every(Number.isFinite) ? [[...termRow(calendar, start + t), ...row]] : [],
+  );
+  if (whole.length < terms.length + y[0].length) return;
+  const found = factorColumns(whole);
   if ("factor" in found) return;
   const { columns, weights } = found.relation;
   throw new Issue({

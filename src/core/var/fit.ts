@@ -3,13 +3,15 @@ import type { Matrix } from "../matrix";
 import { designOf } from "./design";
 import { refuseExactSeries } from "./exact";
 import { leastSquares, residualCovariance } from "./least-squares";
+import { likelihoodFit } from "./likelihood-fit";
+import { longRunFit } from "./long-run";
 import type { VarModel } from "./model";
 import { chooseOrder } from "./order";
 import { regressorCount, regressorsOf } from "./regressors";
 import { requireRows } from "./rows-needed";
 import type { ModelRequest, Sample } from "./sample";
 import { allLags, orderOf, type ModelSettings } from "./settings";
-import { stepSample, type SteppedSample } from "./stepped";
+import { leastObserved, stepSample, type SteppedSample } from "./stepped";
 import { carryTerms, removeTerms, yuleWalker, type MomentFit } from "./yule-walker";
 import { nuttallStrand } from "./nuttall-strand";
 import { dataResiduals, shrinkageDesign } from "./shrinkage";
@@ -43,24 +45,26 @@ export function fitSettings(sample: Sample, settings: ModelSettings): VarModel {
   const rows = stepped.y.length;
   const series = stepped.y[0].length;
   const drivers = stepped.drivers[0]?.length ?? 0;
-  requireRows(settings, { rows, series, drivers });
+  requireRows(settings, { rows: leastObserved(stepped.y), series, drivers });
   refuseExactSeries(stepped.y, settings, stepped.start);
   return {
     settings,
     series,
     drivers,
     regressors: regressorsOf(settings, series, drivers),
-    ...estimate(stepped, settings),
+    ...(settings.fit === "likelihood" ? likelihoodFit(sample, settings) : estimate(stepped, settings)),
     rows,
     start: sample.start,
   };
 }
 
+/** The estimators that ask for nothing but the stepped values. */
 export function estimate(stepped: SteppedSample, settings: ModelSettings): Estimate {
   const rows = stepped.y.length;
   const q = regressorCount(settings, stepped.y[0].length, stepped.drivers[0]?.length ?? 0);
   switch (settings.fit) {
     case "least-squares":
+      if (settings.longRun !== null) return byLongRun(stepped, settings, rows - orderOf(settings) - q);
       return byLeastSquares(stepped, settings, rows - orderOf(settings) - q);
     case "yule-walker":
       return byMoments(stepped, settings, (rest) => yuleWalker(rest, settings), rows / (rows - q));
@@ -81,6 +85,12 @@ export function estimate(stepped: SteppedSample, settings: ModelSettings): Estim
 /** Innovation covariance UᵀU/(T − q). */
 function byLeastSquares(stepped: SteppedSample, settings: ModelSettings, divisor: number): Estimate {
   const { coefficients, residuals } = leastSquares(designOf(stepped, settings, orderOf(settings)));
+  return { coefficients, noiseCovariance: residualCovariance(residuals, divisor) };
+}
+
+/** Innovation covariance UᵀU/(T − q), q of the unrestricted model. */
+function byLongRun(stepped: SteppedSample, settings: ModelSettings, divisor: number): Estimate {
+  const { coefficients, residuals } = longRunFit(stepped, settings);
   return { coefficients, noiseCovariance: residualCovariance(residuals, divisor) };
 }
 

@@ -1,8 +1,10 @@
 import type { Matrix } from "../matrix";
-import { applyPower, integrate, rowsLost, spansOf, undoPower } from "../prepare/steps";
+import { applyPower, applySteps, integrate, rowsLost, spansOf, undoPower } from "../prepare/steps";
+import { hasGaps, oneStepLevels } from "./filtered";
 import type { VarModel } from "./model";
 import { oneStep } from "./residuals";
 import type { Sample } from "./sample";
+import { orderOf } from "./settings";
 import { stepSample } from "./stepped";
 
 /** One row per row of the sample; rows before the first forecast are NaN throughout. */
@@ -18,6 +20,7 @@ const below = (rows: Matrix, total: number): Matrix => [
  */
 export function fittedLevels(model: VarModel, sample: Sample): Matrix {
   const { steps } = model.settings;
+  if (hasGaps(sample)) return fittedPastGaps(model, sample);
   const { fitted } = oneStep(model, stepSample(sample, steps));
   const first = sample.series.length - fitted.length;
   const columns = steps.map((list, k) => {
@@ -38,7 +41,32 @@ export function fittedLevels(model: VarModel, sample: Sample): Matrix {
   );
 }
 
+/** The same where gaps are: from the observed cells of the rows before. */
+function fittedPastGaps(model: VarModel, sample: Sample): Matrix {
+  const levels = oneStepLevels(model, sample).slice(orderOf(model.settings));
+  return below(
+    levels.map((row) => row.map((v, k) => undoPower(v, model.settings.steps[k]))),
+    sample.series.length,
+  );
+}
+
+/** What a model's numbers leave over where gaps are: nothing is known of a gap. */
+function residualsPastGaps(model: VarModel, sample: Sample): Matrix {
+  const { steps } = model.settings;
+  const powered = applySteps(
+    sample.series,
+    steps.map((list) => list.filter(({ kind }) => kind !== "diff")),
+  );
+  const levels = oneStepLevels(model, sample).slice(orderOf(model.settings));
+  const first = powered.length - levels.length;
+  return below(
+    levels.map((row, t) => row.map((v, k) => powered[first + t][k] - v)),
+    powered.length,
+  );
+}
+
 /** What a model's numbers leave over, on the stepped scale. @returns n×K, NaN in the rows that steps and lags use up */
 export function residualRows(model: VarModel, sample: Sample): Matrix {
+  if (hasGaps(sample)) return residualsPastGaps(model, sample);
   return below(oneStep(model, stepSample(sample, model.settings.steps)).residuals, sample.series.length);
 }

@@ -45,17 +45,19 @@ const candidate = (shape: Shape, order: number): ModelSettings => ({
 export function compareOrders(sample: SteppedSample, shape: Shape, maxOrder: number): OrderRow[] {
   const series = sample.y[0].length;
   const drivers = sample.drivers[0]?.length ?? 0;
+  const usable = rowsWithLags(sample.y, maxOrder);
+  const rows = usable.length;
   // coefficients grow with the order, so all orders together cost about a third of as many of the largest
   requireRows(
     candidate(shape, maxOrder),
-    { rows: sample.y.length, series, drivers },
+    { rows: rows + maxOrder, series, drivers },
     Math.max(1, (maxOrder + 1) / 3),
   );
   refuseExactSeries(sample.y, shape, sample.start);
-  const rows = sample.y.length - maxOrder;
   const out: OrderRow[] = [];
   for (let order = 0; order <= maxOrder; order++) {
-    const design = designOf(sample, candidate(shape, order), maxOrder);
+    const { regressors, z, y } = designOf(sample, candidate(shape, order), maxOrder);
+    const design = { regressors, z: usable.map((t) => z[t]), y: usable.map((t) => y[t]) };
     const { residuals } = leastSquares(design);
     const logDet = logDeterminant(residualCovariance(residuals, rows));
     if (logDet === null || someVanish(residuals, design.y))
@@ -63,6 +65,17 @@ export function compareOrders(sample: SteppedSample, shape: Shape, maxOrder: num
     out.push(
       orderRow({ order, logDet, rows, series, q: termCount(shape) + drivers + series * order }, out.at(-1)),
     );
+  }
+  return out;
+}
+
+/** Rows of a regression on so many lags, counted from the first, that no gap reaches. */
+function rowsWithLags(y: Matrix, lags: number): number[] {
+  const whole = y.map((row) => row.every(Number.isFinite));
+  const out: number[] = [];
+  for (let t = 0, run = 0; t < y.length; t++) {
+    run = whole[t] ? run + 1 : 0;
+    if (run > lags) out.push(t - lags);
   }
   return out;
 }
@@ -129,7 +142,11 @@ export function chooseOrder(
   maxOrder: number | null,
 ): number {
   const top = maxOrder ?? defaultMaxOrder(sample, shape);
-  const best = bestOrder(compareOrders(sample, shape, top), criterion);
+  // long-run relations pull on the row before: they need a lag
+  const least = shape.longRun === null ? 0 : 1;
+  if (top < least) throw new Issue({ code: "longrun-needs-lag" });
+  const orders = compareOrders(sample, shape, top).filter(({ order }) => order >= least);
+  const best = bestOrder(orders, criterion);
   if (best !== null) return best;
   // the small-sample criterion exists for no order: there are too few rows to choose among orders at all
   const series = sample.y[0].length;

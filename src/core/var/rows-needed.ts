@@ -3,16 +3,19 @@ import { termCount } from "./terms";
 import { orderOf, type Calendar } from "./settings";
 import { requireWork } from "./work";
 
+/** What of the past the equations hold. */
+interface Lags {
+  readonly lags: readonly number[];
+  readonly movingAverage?: number;
+}
+
 /**
  * Rows that a fit needs: p are spent as lags, and each equation's residuals must outnumber its
  * coefficients by the number of series for their covariance to exist, n ≥ p + q + K.
  */
-export function rowsNeeded(
-  calendar: Calendar & { readonly lags: readonly number[] },
-  series: number,
-  drivers: number,
-): number {
-  const coefficients = termCount(calendar) + drivers + series * calendar.lags.length;
+export function rowsNeeded(calendar: Calendar & Lags, series: number, drivers: number): number {
+  const lagged = calendar.lags.length + (calendar.movingAverage ?? 0);
+  const coefficients = termCount(calendar) + drivers + series * lagged;
   return orderOf(calendar) + coefficients + series;
 }
 
@@ -39,11 +42,7 @@ export interface Extent {
  * @param fits how many fits of this size the call asks for
  * @throws Issue "too-few-rows" | "too-heavy"
  */
-export function requireRows(
-  calendar: Calendar & { readonly lags: readonly number[] },
-  extent: Extent,
-  fits = 1,
-): void {
+export function requireRows(calendar: Calendar & Lags, extent: Extent, fits = 1): void {
   const { rows, series, drivers } = extent;
   const need = rowsNeeded(calendar, series, drivers);
   refuseBelow(need, calendar, orderOf(calendar), extent);

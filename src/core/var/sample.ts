@@ -23,6 +23,10 @@ export type ModelPlan =
   | { readonly kind: "fit"; readonly settings: ModelSettings }
   | { readonly kind: "given"; readonly model: VarModel };
 
+/** Everything about the model meant except, where it is still to be chosen, its order. */
+export const shapeOf = (plan: ModelPlan): Shape =>
+  plan.kind === "auto" ? plan.shape : plan.kind === "fit" ? plan.settings : plan.model.settings;
+
 export interface ModelRequest {
   readonly sample: Sample;
   readonly plan: ModelPlan;

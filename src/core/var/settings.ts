@@ -48,6 +48,9 @@ export const allLags = (order: number): number[] => Array.from({ length: order }
 /** True when some lag between 1 and the order is left out. */
 export const isSubset = (lags: readonly number[]): boolean => lags.length !== (lags.at(-1) ?? 0);
 
+/** True for terms that exist only within a long-run relation. */
+export const isInside = (terms: Terms): boolean => terms === "inside-constant" || terms === "inside-trend";
+
 /** Least squares with a constant and nothing else, for a number of series. */
 export const plainShape = (series: number): Shape => ({
   fit: "least-squares",

@@ -13,6 +13,10 @@ export interface SteppedSample {
   readonly start: number;
 }
 
+/** Observed cells of the series that has fewest. */
+export const leastObserved = (y: Matrix): number =>
+  Math.min(...y[0].map((_, k) => y.reduce((count, row) => count + (Number.isNaN(row[k]) ? 0 : 1), 0)));
+
 /**
  * Applies the steps of a plan and drops the rows that they use up.
  * @throws Issue "steps-leave-nothing" | "step-domain"

@@ -1,5 +1,5 @@
 import { zeros, type Matrix } from "../matrix";
-import type { Calendar } from "./settings";
+import type { Calendar, Terms } from "./settings";
 
 /** A deterministic regressor. */
 export type TermName =
@@ -8,12 +8,23 @@ export type TermName =
   | { readonly kind: "season"; readonly season: number }
   | { readonly kind: "wave"; readonly wave: number; readonly part: "sin" | "cos" };
 
+/** Powers of t in every equation; a term inside the long-run relations stands in all of them all the same. */
+const POWERS: { readonly [T in Terms]: number } = {
+  none: 0,
+  constant: 1,
+  "inside-constant": 1,
+  trend: 2,
+  "inside-trend": 2,
+  quadratic: 3,
+};
+
 /** Powers of t, then season: the m deterministic regressors in block order. */
 export function termNames({ terms, cycle, waves }: Calendar): TermName[] {
   const names: TermName[] = [];
-  if (terms === "constant" || terms === "trend" || terms === "quadratic") names.push({ kind: "constant" });
-  if (terms === "trend" || terms === "quadratic") names.push({ kind: "trend", power: 1 });
-  if (terms === "quadratic") names.push({ kind: "trend", power: 2 });
+  const powers = POWERS[terms];
+  if (powers > 0) names.push({ kind: "constant" });
+  if (powers > 1) names.push({ kind: "trend", power: 1 });
+  if (powers > 2) names.push({ kind: "trend", power: 2 });
   if (cycle === null) return names;
   if (waves === null) {
     for (let season = 1; season < cycle; season++) names.push({ kind: "season", season });
@@ -29,7 +40,7 @@ export function termNames({ terms, cycle, waves }: Calendar): TermName[] {
 
 /** Their number m, by arithmetic alone. */
 export function termCount({ terms, cycle, waves }: Calendar): number {
-  const powers = terms === "constant" ? 1 : terms === "trend" ? 2 : terms === "quadratic" ? 3 : 0;
+  const powers = POWERS[terms];
   if (cycle === null) return powers;
   return powers + (waves === null ? cycle - 1 : 2 * waves - (2 * waves === cycle ? 1 : 0));
 }

@@ -1,4 +1,6 @@
 import { Issue } from "../issue";
+import type { ModelSettings } from "./settings";
+import { termCount } from "./terms";
 
 /**
  * Multiplications of orthogonal factors that one call may ask for: about two seconds of a page that must stay
@@ -16,6 +18,33 @@ export const exceedsWork = (products: number): boolean => products > WORK_LIMIT 
 export function requireStates(states: number): void {
   const limit = Math.floor(Math.cbrt(WORK_LIMIT / 10));
   if (states > limit) throw new Issue({ code: "too-many-states", states, limit });
+}
+
+/** Multiplications that a fit by likelihood may take beside the page: about a minute. */
+const LIKELIHOOD_LIMIT = 2e10;
+
+/** How often a likelihood is usually computed until its top is found, slope included. */
+const LIKELIHOOD_TRIES = 50;
+
+/**
+ * Refuses a fit by likelihood that would take minutes: a pass of the filter and its slope cost about six products of
+ * the state's variance with its few-celled transition per row.
+ * @throws Issue "too-heavy"
+ */
+export function requireLikelihoodWork(
+  {
+    rows,
+    series,
+    undone,
+  }: { readonly rows: number; readonly series: number; readonly undone: readonly (readonly number[])[] },
+  { lags, movingAverage, ...settings }: ModelSettings,
+): void {
+  const states =
+    series * Math.max(lags.at(-1) ?? 0, movingAverage + 1) +
+    undone.reduce((sum, { length }) => sum + length, 0);
+  const each = rows * 6 * states * states * (series + 1) + 60 * states ** 3;
+  const coefficients = termCount(settings) + series * (lags.length + movingAverage);
+  if (LIKELIHOOD_TRIES * each > LIKELIHOOD_LIMIT) throw new Issue({ code: "too-heavy", rows, coefficients });
 }
 
 /**

@@ -11,7 +11,7 @@ export const ahead = defineCall({
     const horizon = readHorizon(args["horizon"]);
     const { request, series, options, wording } = readModelCall(args, {
       call: "AHEAD",
-      keys: [...MODEL_KEYS, "point", "labels"],
+      keys: [...MODEL_KEYS, "gaps", "point", "labels"],
       future: horizon,
       use: "numbers",
     });

@@ -1,4 +1,5 @@
 import { Issue } from "../../core/issue";
+import { shapeOf } from "../../core/var/sample";
 import { headings } from "../../texts/en";
 import { defineCall } from "../call";
 import { readModelCall } from "../model-call";
@@ -13,7 +14,7 @@ export const bands = defineCall({
     const horizon = readHorizon(args["horizon"]);
     const { request, series, options, wording } = readModelCall(args, {
       call: "BANDS",
-      keys: [...MODEL_KEYS, "coverage", "bands", "joint", "point", "draws", "seed", "labels"],
+      keys: [...MODEL_KEYS, "gaps", "coverage", "bands", "joint", "point", "draws", "seed", "labels"],
       future: horizon,
       // what is redrawn is fitted anew, so a block's numbers cannot stand
       use: ({ bands }) => (bands === "redrawn" ? "settings" : "numbers"),
@@ -22,6 +23,8 @@ export const bands = defineCall({
       if (options[key] !== undefined && options.bands !== "redrawn")
         throw new Issue({ code: "option-needs", key, needs: "bands=redrawn" });
     }
+    const longRun = shapeOf(request.plan).longRun !== null;
+    if (longRun && options.bands === "fitted") throw new Issue({ code: "longrun-errors", call: "BANDS" });
     requireCells(horizon + 1, 3 * series.names.length);
     return {
       request: {
@@ -30,7 +33,7 @@ export const bands = defineCall({
         point: options.point ?? "median",
         coverage: options.coverage ?? 0.95,
         joint: options.joint === "yes",
-        bands: options.bands ?? "fitted",
+        bands: options.bands ?? (longRun ? "known" : "fitted"),
         draws: options.draws ?? 1000,
         seed: options.seed ?? 1,
       },

@@ -1,3 +1,5 @@
+import { Issue } from "../../core/issue";
+import { shapeOf } from "../../core/var/sample";
 import { headings } from "../../texts/en";
 import { defineCall } from "../call";
 import { regressorLabel, type Names } from "../labels";
@@ -11,11 +13,13 @@ export const estimates = defineCall({
   read: (args) => {
     const { request, names, wording, options } = readModelCall(args, {
       call: "ESTIMATES",
-      keys: [...MODEL_KEYS, "coverage", "labels"],
+      keys: [...MODEL_KEYS, "gaps", "coverage", "labels"],
       future: 0,
       use: "settings",
     });
     requireLabels(options);
+    if (shapeOf(request.plan).longRun !== null)
+      throw new Issue({ code: "longrun-errors", call: "ESTIMATES" });
     return { request: { ...request, coverage: options.coverage ?? 0.95 }, layout: names, wording };
   },
   write: (rows, names: Names) => [

@@ -1,3 +1,5 @@
+import { Issue } from "../../core/issue";
+import { shapeOf } from "../../core/var/sample";
 import { headings } from "../../texts/en";
 import { defineCall } from "../call";
 import type { OutCell } from "../cell";
@@ -15,6 +17,7 @@ export const granger = defineCall({
       future: 0,
       use: "settings",
     });
+    if (shapeOf(request.plan).movingAverage > 0) throw new Issue({ code: "ma-not-here", call: "GRANGER" });
     return {
       request: { ...request, spare: options.spare ?? 0, adjust: options.adjust === "yes" },
       layout: wantsLabels(options, series) ? series.names : null,

@@ -11,7 +11,7 @@ export const model = defineCall({
   read: (args) => {
     const { request, names, wording, options } = readModelCall(args, {
       call: "MODEL",
-      keys: [...MODEL_KEYS, "labels"],
+      keys: [...MODEL_KEYS, "gaps", "labels"],
       future: 0,
       use: "settings",
     });

@@ -12,7 +12,7 @@ type Names = readonly string[] | null;
 function readRowByRow(args: RawArguments, call: string): Reading<"fitted" | "residuals", Names> {
   const { request, series, options, wording } = readModelCall(args, {
     call,
-    keys: [...MODEL_KEYS, "labels"],
+    keys: [...MODEL_KEYS, "gaps", "labels"],
     future: 0,
     use: "numbers",
   });

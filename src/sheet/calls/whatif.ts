@@ -9,10 +9,10 @@ export const whatif = defineCall({
   name: "WHATIF",
   task: "whatIf",
   read: (args) => {
-    const imposed = readPlanRange(args["plan"], readSeries(args["series"]));
+    const imposed = readPlanRange(args["plan"], readSeries(args["series"], "series", "allow"));
     const { request, series, options, wording } = readModelCall(args, {
       call: "WHATIF",
-      keys: [...MODEL_KEYS, "point", "labels"],
+      keys: [...MODEL_KEYS, "gaps", "point", "labels"],
       future: imposed.length,
       use: "numbers",
     });

@@ -89,7 +89,11 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `Nothing is given for ${argument}. Point at a range or write a value.`,
   "not-a-number-cell": ({ range, name, row, found }) =>
     `${who(range, name)}, row ${row}: ${found} is not a number. Correct the cell.`,
-  gap: ({ range, name, row }) => `${who(range, name)}, row ${row} is blank. Fill it or shorten the range.`,
+  gap: ({ range, name, row, allowable }) =>
+    `${who(range, name)}, row ${row} is blank. ` +
+    (allowable
+      ? "Fill it, shorten the range, or set gaps=allow with fit=likelihood."
+      : "Fill it or shorten the range."),
   "blank-series": ({ name }) => `Series ${name} is blank in every row. Leave its column out of the range.`,
   "header-number": ({ range, column, text }) =>
     `Column ${column} of ${range} is headed '${text}', which looks like a number. Give it a name, or turn the text into a number.`,
@@ -116,8 +120,20 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `For the option ${key}, ${found} will not do. Give ${allowedWords(allowed)}.`,
   "option-needs": ({ key, needs }) =>
     `The option ${key} needs ${needs} beside it. Add ${needs}, or leave ${key} out.`,
+  "longrun-needs-lag": () =>
+    "Long-run relations pull on the row before, so the model needs an order of 1 or more. Raise the order, or leave longrun out.",
+  "longrun-errors": ({ call }) =>
+    call === "BANDS"
+      ? "With long-run relations the coefficients' errors are not known in this form. Use bands=known or bands=redrawn."
+      : `${call} has no errors to give for a model with long-run relations. Fit it without longrun.`,
+  "ma-not-here": ({ call }) =>
+    `${call} has no place for a moving-average part. Leave ma out, or use a block without it.`,
+  "gaps-not-here": ({ call }) =>
+    `${call} cannot look past gaps with numbers that no likelihood found. Use bands=known, or fit the block with fit=likelihood.`,
   "fit-all-lags": ({ fit }) =>
-    `The fit ${fit} uses all lags up to the order. Leave uselags out, or choose least-squares or yule-walker.`,
+    fit === "longrun"
+      ? "Long-run relations use all lags up to the order. Leave uselags out, or leave longrun out."
+      : `The fit ${fit} uses all lags up to the order. Leave uselags out, or choose least-squares or yule-walker.`,
   "fit-without-drivers": ({ fit }) =>
     `The fit ${fit} takes no drivers. Leave the drivers out, or use fit=least-squares.`,
   "options-clash": ({ key, other }) =>
@@ -176,6 +192,14 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
     `Series ${wording.series[series]} is predicted without any error, so its equation has nothing to test against. Look for a series that is a shifted or scaled copy of others.`,
   "singular-system": () =>
     "The equations for the coefficients have no single solution for these data. Look for series that repeat each other, or use fewer lags.",
+  "likelihood-stuck": ({ reason }) =>
+    reason === "ma-root"
+      ? "The likelihood leads to a moving average at its limit, which takes back a difference or a lag. Use a smaller ma, or fewer differences."
+      : reason === "ar-root"
+        ? "The likelihood leads to a model at the edge of stability. Use differences in the steps, or fit=least-squares."
+        : "The likelihood has no clear top: lags and past innovations stand in for each other. Use a smaller ma or order, or fit=least-squares.",
+  "gaps-too-many": () =>
+    "So many cells are blank that the steps cannot be undone: some level is never seen. Fill cells near the first rows, or use fewer differences.",
   unstable: ({ modulus }) =>
     `This model is not stable: its largest root is ${modulus.toFixed(4)}, so it has no stationary state. Use differences, or correct the coefficients.`,
   "no-lags": () =>

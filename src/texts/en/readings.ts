@@ -62,6 +62,7 @@ const gapReadings: Readonly<Record<Gap, string>> = {
   heavy: "too large to work out here",
   "no-lags": "no lags, nothing that lasts",
   "no-coefficients": "no coefficients to judge",
+  "moving-average": "not defined beside a moving average",
   untabulated: "more than 30 coefficients: no p-value known",
 };
 
