@@ -9,6 +9,14 @@ import {
   type MomentValues,
   type VarValues,
 } from "../support/references";
+import {
+  arimaSuite,
+  likelihoodSuite,
+  vecmSuite,
+  type ArimaValues,
+  type LikelihoodValues,
+  type VecmValues,
+} from "../support/likelihood-references";
 import { responseSuite, type ResponseValues } from "../support/response-references";
 
 /**
@@ -49,6 +57,7 @@ describe("live: R", () => {
   if (!hasR) return;
   momentSuite(run<MomentValues>("Rscript", ["--vanilla", `${folder}scripts/moments.R`, `${folder}data`]));
   distributionSuite(run<DistributionValues>("Rscript", ["--vanilla", `${folder}scripts/distributions.R`]));
+  arimaSuite(run<ArimaValues>("Rscript", ["--vanilla", `${folder}scripts/arima.R`, `${folder}data`]));
 });
 
 describe("live: statsmodels", () => {
@@ -56,4 +65,6 @@ describe("live: statsmodels", () => {
   if (python === undefined) return;
   varSuite(run<VarValues>(python, [`${folder}scripts/var.py`, `${folder}data`]));
   responseSuite(run<ResponseValues>(python, [`${folder}scripts/responses.py`, `${folder}data`]));
+  likelihoodSuite(run<LikelihoodValues>(python, [`${folder}scripts/likelihood.py`, `${folder}data`]));
+  vecmSuite(run<VecmValues>(python, [`${folder}scripts/vecm.py`, `${folder}data`]));
 });
