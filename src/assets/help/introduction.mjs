@@ -35,6 +35,16 @@ coefficient, constants too; all orders are compared on the same rows. The innova
 coefficients. After a log the point forecast is the median, unless <code>point=mean</code>. Bands are normal on the scale of the fit and
 then taken back to your units.</p>
 
+<h2>Blank cells</h2>
+<p>A blank cell is refused with its place, unless the call says <code>gaps=allow</code>: then <code>fit=likelihood</code> fits the model to all
+cells that are there, and forecasts start from what they say. No cell is lost to a difference either: a series with gaps
+is followed as the level it is. A block's numbers pass over gaps too, whatever they were fitted with.</p>
+
+<h2>Long-run relations</h2>
+<p>Series that wander, but not away from each other, can be held together by <code>longrun=1</code> or more relations (Johansen). The
+block shows the model in levels that they imply; <code>terms=inside-constant</code> or <code>inside-trend</code> keeps a term within them. The
+coefficients' errors are not known in this form, so bands are <code>known</code> or <code>redrawn</code>.</p>
+
 <h2>How the tests of what is left are read</h2>
 <p>RESIDTEST asks of a model's residuals whether anything is left to predict, whether the spread changes, whether the shape is normal,
 whether an equation changed, and whether the fit can be used. A reading speaks up where p is below 0.05, which chance alone does one
