@@ -1,7 +1,7 @@
 import { Issue } from "../issue";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
 import { coefficientRoots } from "../var/coefficient-covariance";
-import { hasGaps } from "../var/filtered";
+import { hasGaps } from "../var/observed";
 import { likelihoodDirections } from "../var/likelihood-covariance";
 import type { VarModel } from "../var/model";
 import type { Sample } from "../var/sample";

@@ -1,6 +1,7 @@
 import type { Matrix } from "../matrix";
 import { integratePath } from "../prepare/steps";
-import { expectedLevels, hasGaps } from "../var/filtered";
+import { expectedLevels } from "../var/filtered";
+import { hasGaps } from "../var/observed";
 import type { VarModel } from "../var/model";
 import type { Sample } from "../var/sample";
 import { stepSample } from "../var/stepped";

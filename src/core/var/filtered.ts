@@ -15,10 +15,6 @@ import type { Sample } from "./sample";
 import { stationaryMean } from "./stationary-mean";
 import { termCount, termRow } from "./terms";
 
-/** True where a sample has gaps, which only a filter can look past. */
-export const hasGaps = (sample: Sample): boolean =>
-  sample.series.some((row) => row.some((v) => Number.isNaN(v)));
-
 /** A model's numbers laid over the observed cells of a sample: everything that is known, taken out of them. */
 interface Laid {
   readonly space: VarmaSpace;

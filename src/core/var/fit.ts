@@ -1,5 +1,7 @@
-import { scale } from "../linalg";
+import { Issue } from "../issue";
+import { factorColumns, inverseRoot, invertTriangle, multiply, scale, transpose } from "../linalg";
 import type { Matrix } from "../matrix";
+import { symmetric } from "../moments/whittle";
 import { designOf } from "./design";
 import { refuseExactSeries } from "./exact";
 import { leastSquares, residualCovariance } from "./least-squares";
@@ -103,7 +105,10 @@ function byShrinkage(stepped: SteppedSample, settings: ModelSettings, divisor: n
   };
 }
 
-/** Innovation covariance of the recursion times n/(n − q). */
+/**
+ * Innovation covariance of the recursion times n/(n − q). The recursions follow any mixing of the series, so they are
+ * run on an uncorrelated mix of unit size, x[t] with rest[t] = M·x[t]: neither units nor near copies cost digits.
+ */
 function byMoments(
   stepped: SteppedSample,
   settings: ModelSettings,
@@ -111,7 +116,13 @@ function byMoments(
   factor: number,
 ): Estimate {
   const { rest, taken } = removeTerms(stepped, settings);
-  const { lagMatrices, innovation } = solve(rest);
+  const found = factorColumns(rest);
+  if ("relation" in found) throw new Issue({ code: "singular-system" });
+  const unmix = scale(inverseRoot(found.factor), Math.sqrt(rest.length));
+  const mix = transpose(invertTriangle(unmix));
+  const ofMix = solve(multiply(rest, unmix));
+  const lagMatrices = ofMix.lagMatrices.map((phi) => multiply(multiply(mix, phi), transpose(unmix)));
+  const innovation = symmetric(multiply(multiply(mix, ofMix.innovation), transpose(mix)));
   const terms = carryTerms(settings, taken, lagMatrices);
   return {
     coefficients: [...terms, ...lagMatrices.flatMap((phi) => phi[0].map((_, k) => phi.map((row) => row[k])))],

@@ -2,7 +2,7 @@ import { Issue } from "../issue";
 import { cholesky, invertTriangle, multiply, scale, subtract, transpose } from "../linalg";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
 import { likelihoodAt, type MeanPart } from "./likelihood";
-import { inUnits, likelihoodProblem, type LikelihoodProblem } from "./likelihood-fit";
+import { likelihoodProblem, unmixed, type LikelihoodProblem } from "./likelihood-fit";
 import type { VarModel } from "./model";
 import { largestRoot } from "./roots";
 import type { Sample } from "./sample";
@@ -62,11 +62,12 @@ interface MeanAround {
   slope(by: MeanPart): number[];
 }
 
-function meanAround(model: VarModel, { data, coordinates, units }: LikelihoodProblem): MeanAround {
-  const inUnit = (rows: Matrix) => rows.map((row) => row.map((v, k) => v / units[k]));
+function meanAround(model: VarModel, { data, coordinates, mix }: LikelihoodProblem): MeanAround {
+  const unmix = transpose(invertTriangle(mix));
+  const ofMix = (rows: Matrix) => multiply(rows, unmix);
   const centre: MeanPart = {
-    terms: inUnit(stationaryMean(model)),
-    drivers: inUnit(model.coefficients.filter((_, r) => model.regressors[r].kind === "driver")),
+    terms: ofMix(stationaryMean(model)),
+    drivers: ofMix(model.coefficients.filter((_, r) => model.regressors[r].kind === "driver")),
   };
   const there = likelihoodAt(data, coordinates.varma(new Float64Array(coordinates.size)), centre);
   if (there === null) throw new Issue({ code: "likelihood-stuck", reason: "flat" });
@@ -96,7 +97,7 @@ function meanAround(model: VarModel, { data, coordinates, units }: LikelihoodPro
 /** How the block's coefficients move along one coordinate: linear but for the terms, which are bilinear. */
 function unitDirection(
   model: VarModel,
-  { coordinates, units }: LikelihoodProblem,
+  { coordinates, mix }: LikelihoodProblem,
   around: MeanAround,
   c: number,
 ): Matrix {
@@ -105,7 +106,7 @@ function unitDirection(
     const dynamic = new Float64Array(coordinates.size);
     if (c < around.size) mean[c] = step;
     else dynamic[c - around.size] = step;
-    return inUnits(model.settings, coordinates.varma(dynamic), around.at(mean), units).coefficients;
+    return unmixed(model.settings, coordinates.varma(dynamic), around.at(mean), mix).coefficients;
   };
   // a difference to both sides is exact for what is bilinear
   return scale(subtract(at(1), at(-1)), 0.5);

@@ -1,6 +1,7 @@
 import { Issue } from "../issue";
-import { cholesky, eigenvalues, scale } from "../linalg";
+import { cholesky, eigenvalues, invertTriangle, multiply, scale, transpose } from "../linalg";
 import type { Matrix } from "../matrix";
+import { symmetric } from "../moments/whittle";
 import { minimise, type Minimum } from "../optimise/quasi-newton";
 import { bridgedColumns } from "../prepare/fill";
 import { invertible } from "../state-space/invertible";
@@ -16,8 +17,8 @@ import {
   toRows,
   type Coordinates,
 } from "./likelihood-coordinates";
-import { residualCovariance } from "./least-squares";
-import { observedSample, type Observed } from "./observed";
+import { residualCovariance, type Regression } from "./least-squares";
+import { hasGaps, observedSample, type Observed } from "./observed";
 import type { VarModel } from "./model";
 import { regressorsOf } from "./regressors";
 import { companionMatrix } from "./roots";
@@ -28,10 +29,14 @@ import { termRow } from "./terms";
 import { carryTerms } from "./yule-walker";
 import { requireLikelihoodWork } from "./work";
 
-/** The likelihood of a sample in coordinates around a start, every series divided by its unit. */
+/**
+ * The likelihood of a sample in coordinates around a start, for series x[t] with y[t] = mix·x[t] whose innovations have
+ * variance one: without gaps they are mixed so as to be uncorrelated too, as the likelihood follows any mixing.
+ */
 export interface LikelihoodProblem {
   readonly data: LikelihoodData;
-  readonly units: readonly number[];
+  /** K×K, lower. */
+  readonly mix: Matrix;
   readonly coordinates: Coordinates;
 }
 
@@ -52,11 +57,11 @@ export function likelihoodFit(
   settings: ModelSettings,
 ): { readonly coefficients: Matrix; readonly noiseCovariance: Matrix } {
   const problem = likelihoodProblem(sample, settings);
-  const { coordinates, data, units } = problem;
+  const { coordinates, data, mix } = problem;
   const found = minimise((point) => fallAt(problem, point), new Float64Array(coordinates.size));
   const varma = withinCircle(coordinates.varma(found.point));
   refuseUnsettled(found, varma);
-  return inUnits(settings, varma, likelihoodAt(data, varma, null)!.mean, units);
+  return unmixed(settings, varma, likelihoodAt(data, varma, null)!.mean, mix);
 }
 
 /** Beyond the unit circle a moving average repeats what another says within: the same likelihood, one of the two. */
@@ -86,41 +91,58 @@ export function likelihoodProblem(
   const filled = stepSample({ ...sample, series: bridgedColumns(sample.series) }, settings.steps);
   const observed = observedSample(sample, settings.steps);
   requireLikelihoodWork(observed, settings);
-  const start = hannanRissanen(filled, settings);
-  const noise = model ? model.noiseCovariance : residualCovariance(start.residuals, start.residuals.length);
+  const noise = model ? model.noiseCovariance : noiseOf(hannanRissanen(filled, settings));
   refuseNoiseless(noise, filled.y);
-  const units = noise.map((row, k) => Math.sqrt(row[k]));
-  const regressors = regressorsOf(settings, units.length, sample.drivers[0]?.length ?? 0);
-  const from = regressors.flatMap((regressor) =>
-    regressor.kind === "lag" || regressor.kind === "innovation" ? [units[regressor.series]] : [],
-  );
-  const centre = dynamicRows(regressors, (model ?? start).coefficients).map((row, r) =>
-    row.map((v, k) => (v * from[r]) / units[k]),
-  );
+  const mix = mixOf(noise, hasGaps(sample));
+  const unmix = invertTriangle(mix);
+  const mixed = { ...filled, y: multiply(filled.y, transpose(unmix)) };
+  const start = hannanRissanen(mixed, settings);
+  const regressors = regressorsOf(settings, mix.length, sample.drivers[0]?.length ?? 0);
+  const rows = dynamicRows(regressors, (model ?? start).coefficients);
   const spread = dynamicSpread(start.inverseRoot, regressors);
-  const root = cholesky(noise.map((row, i) => row.map((v, j) => v / (units[i] * units[j]))));
+  const root = cholesky(multiply(multiply(unmix, noise), transpose(unmix)));
   if (root === null || spread === null) throw new Issue({ code: "singular-system" });
   return {
     data: {
-      observed: dividedBy(observed, units),
+      observed: hasGaps(sample) ? inUnits(observed, mix) : { ...observed, values: flat(mixed.y) },
       terms: filled.y.map((_, t) => termRow(settings, filled.start + t)),
       drivers: filled.drivers.slice(0, observed.rows),
     },
-    units,
+    mix,
     coordinates: coordinatesAround(
       settings,
-      model ? centre : damped(centre, settings, units.length),
-      spread.map((row, r) => row.map((v) => v * from[r])),
+      model ? mixedRows(rows, settings, unmix, mix) : damped(rows, settings, mix.length),
+      spread,
       root,
       observed.rows,
     ),
   };
 }
 
-const dividedBy = (observed: Observed, units: readonly number[]): Observed => {
-  const divide = (values: Float64Array) => values.map((v, i) => v / units[i % units.length]);
+const noiseOf = ({ residuals }: Regression): Matrix => residualCovariance(residuals, residuals.length);
+
+/** Gaps stand in single series, which can then be brought to one size but not mixed. @throws Issue "singular-system" */
+function mixOf(noise: Matrix, gaps: boolean): Matrix {
+  if (gaps) return noise.map((row, i) => row.map((v, j) => (i === j ? Math.sqrt(v) : 0)));
+  const root = cholesky(noise);
+  if (root === null) throw new Issue({ code: "singular-system" });
+  return root;
+}
+
+const flat = (x: Matrix): Float64Array => Float64Array.from(x.flat());
+
+/** Observed cells of series that are each divided by a unit of their own. */
+const inUnits = (observed: Observed, mix: Matrix): Observed => {
+  const divide = (values: Float64Array) => values.map((v, i) => v / mix[i % mix.length][i % mix.length]);
   return { ...observed, values: divide(observed.values), known: divide(observed.known) };
 };
+
+/** Lags and innovations of y = from·x as those of to·y. */
+function mixedRows(rows: Matrix, settings: ModelSettings, to: Matrix, from: Matrix): Matrix {
+  const { phi, theta } = toMatrices(rows, settings, to.length);
+  const turn = (matrix: Matrix) => multiply(multiply(to, matrix), from);
+  return toRows({ phi: phi.map(turn), theta: theta.map(turn) }, settings, to.length);
+}
 
 /** A start within the stationary and invertible models: roots that reach too far are all drawn in. */
 function damped(rows: Matrix, settings: ModelSettings, series: number): Matrix {
@@ -149,26 +171,28 @@ function refuseUnsettled({ decrement, value }: Minimum, { phi, theta }: Varma): 
   throw new Issue({ code: "likelihood-stuck", reason });
 }
 
-/** Back from units of one to the units of the series, and from the mean to terms in the equations. */
-export function inUnits(
+/** Back to y = mix·x, and from the mean to terms in the equations. */
+export function unmixed(
   settings: ModelSettings,
   { phi, theta, sigma }: Varma,
   mean: MeanPart,
-  units: readonly number[],
+  mix: Matrix,
 ): { readonly coefficients: Matrix; readonly noiseCovariance: Matrix } {
-  const unscaled = (m: Matrix) => m.map((row, i) => row.map((v, k) => (v * units[i]) / units[k]));
-  const times = (m: Matrix) => m.map((row) => row.map((v, k) => v * units[k]));
-  const lags = { phi: phi.map(unscaled), theta: theta.map(unscaled) };
-  const dynamic = toRows(lags, settings, units.length);
-  const past = settings.lags.length * units.length;
-  const used = settings.lags.map((lag) => lags.phi[lag - 1]);
+  const series = mix.length;
+  const rows = mixedRows(toRows({ phi, theta }, settings, series), settings, mix, invertTriangle(mix));
+  const past = settings.lags.length * series;
+  const lags = toMatrices(rows, settings, series).phi;
   return {
     coefficients: [
-      ...carryTerms(settings, times(mean.terms), used),
-      ...dynamic.slice(0, past),
-      ...times(mean.drivers),
-      ...dynamic.slice(past),
+      ...carryTerms(
+        settings,
+        multiply(mean.terms, transpose(mix)),
+        settings.lags.map((lag) => lags[lag - 1]),
+      ),
+      ...rows.slice(0, past),
+      ...multiply(mean.drivers, transpose(mix)),
+      ...rows.slice(past),
     ],
-    noiseCovariance: sigma.map((row, i) => row.map((v, j) => v * units[i] * units[j])),
+    noiseCovariance: symmetric(multiply(multiply(mix, sigma), transpose(mix))),
   };
 }

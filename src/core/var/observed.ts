@@ -1,6 +1,10 @@
 import { applyPower, planLoss, rowsLost, spansOf, type StepPlan } from "../prepare/steps";
 import type { Sample } from "./sample";
 
+/** True where a sample has gaps, which only a filter can look past. */
+export const hasGaps = (sample: Sample): boolean =>
+  sample.series.some((row) => row.some((v) => Number.isNaN(v)));
+
 /**
  * The observed cells of a sample as a state space sees them. A series whose differences a gap would reach is observed
  * as the level it is, so that no observed cell is lost; every other series as its stepped values.

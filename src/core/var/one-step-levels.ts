@@ -1,6 +1,7 @@
 import type { Matrix } from "../matrix";
 import { applyPower, applySteps, integrate, rowsLost, spansOf, undoPower } from "../prepare/steps";
-import { hasGaps, oneStepLevels } from "./filtered";
+import { oneStepLevels } from "./filtered";
+import { hasGaps } from "./observed";
 import type { VarModel } from "./model";
 import { oneStep } from "./residuals";
 import type { Sample } from "./sample";
