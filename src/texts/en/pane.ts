@@ -26,7 +26,7 @@ export const paneWords = {
   cycle: "Season, in rows",
   cycleHint: "none",
   waves: "Smooth waves in it",
-  wavesHint: "each row its own",
+  wavesHint: "no smoothing",
   place: "First cell",
   placeHint: "To choose the place, select a cell beside the block, or type one of another sheet.",
   formula: "The formula",
