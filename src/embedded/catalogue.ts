@@ -27,7 +27,7 @@ export function formulaConfig(
     function: known.map(({ id, parameters }) => {
       const required = parameters.filter(({ optional }) => !optional).length;
       return [
-        hostFunctionClass(associated.get(id)!, parameters.length, required, around),
+        hostFunctionClass(id, associated.get(id)!, parameters.length, required, around),
         `${NAMESPACE}.${id}`,
       ];
     }),

@@ -6,23 +6,23 @@ import {
 } from "@univerjs/preset-sheets-core";
 import { faultValue, fromPlatform, toPlatform, type BlankAs } from "./cells";
 import type { FaultNotes } from "./fault-notes";
+import { Interrupted, type RunningCalls } from "./running-calls";
 
 type SheetFunction = (...args: unknown[]) => unknown;
 
 /** What all functions of a page share. */
 export interface HostSurroundings {
   readonly faults: FaultNotes;
+  readonly calls: RunningCalls;
   blankAs: BlankAs;
 }
-
-/** The invocation object that the platform passes last; a function may leave its own answer to a cancellation in it. */
-const invocation = () => ({ isInValuePreview: false, onCanceled: () => undefined });
 
 /**
  * Makes the engine's function class for one of our functions: arguments go in as the platform would pass them, results
  * and messages come back.
  */
 export function hostFunctionClass(
+  id: string,
   fn: SheetFunction,
   parameters: number,
   required: number,
@@ -44,11 +44,13 @@ export function hostFunctionClass(
       const args = Array.from({ length: parameters }, (_, i) => given[i] ?? null);
       const place = { sheet: this.subUnitId ?? "", row: this.row, column: this.column };
       const failed = (thrown: unknown) => {
+        // what was let go of is not shown, so nothing is to be said about it
+        if (thrown instanceof Interrupted) return faultValue(thrown);
         around.faults.set(place, thrown instanceof Error ? thrown.message : "");
         return faultValue(thrown);
       };
       try {
-        const result = fn(...args, invocation());
+        const result = around.calls.run(id, place, (invocation) => fn(...args, invocation));
         around.faults.clear(place);
         if (!(result instanceof Promise)) return fromPlatform(result);
         return new AsyncObject(result.then(fromPlatform, failed) as never) as unknown as FunctionVariantType;

@@ -8,6 +8,7 @@ import { FaultNotes } from "./fault-notes";
 import type { HostSurroundings } from "./host-function";
 import { mountMessageStrip } from "./message-strip";
 import "./page.css";
+import { RunningCalls } from "./running-calls";
 import { openWorkbook, type Grid } from "./workbook";
 
 /** The cell whose formula fills the forecast: the formula line shows it when the page opens. */
@@ -15,7 +16,11 @@ const FIRST_CELL = "H4";
 
 /** The page without Excel: the grid with the demo book, and the pane beside it. */
 async function open(): Promise<void> {
-  const around: HostSurroundings = { faults: new FaultNotes(), blankAs: "nothing" };
+  const around: HostSurroundings = {
+    faults: new FaultNotes(),
+    calls: new RunningCalls(),
+    blankAs: "nothing",
+  };
   const grid = await openWorkbook("grid", around);
   const host = new EmbeddedHost(grid);
   grid.api.getActiveWorkbook()!.getActiveSheet().getRange(FIRST_CELL).activate();

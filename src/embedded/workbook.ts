@@ -11,6 +11,7 @@ import { explainOnHover } from "./hover-message";
 import { faultMessage } from "./message-strip";
 import type { HostSurroundings } from "./host-function";
 import { showLegibleNumbers } from "./legible-numbers";
+import { restartWhenChanged } from "./restart-when-changed";
 import { enableSpillReference } from "./spill-reference";
 import { cureStaleDependants } from "./stale-dependants";
 
@@ -53,6 +54,7 @@ export async function openWorkbook(container: string, around: HostSurroundings):
   // these reach for services that exist only once a workbook is open
   showLegibleNumbers(injector);
   tintCorrelations(injector, LEADS_HEAT);
+  restartWhenChanged(injector, around.calls);
   cureStaleDependants(injector);
   explainOnHover(injector, (sheet, row, column) => faultMessage(grid, around.faults, sheet, row, column));
   return grid;

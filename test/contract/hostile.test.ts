@@ -35,8 +35,7 @@ const PROGRAM_WORDS =
   /undefined|\bNaN\b|Infinity|\[object|TypeError|RangeError|Error:|\bat \w+\.|\bnull\b|stack|BigInt|Symbol/;
 const BUG_WORDS = "failed on something it should have handled";
 
-// two are promised; five leave room for a machine that is busy with the other tests
-const SECONDS = 5;
+const SECONDS = 2;
 
 const FITS = [
   "least-squares",

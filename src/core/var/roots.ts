@@ -3,6 +3,7 @@ import { eigenvalues } from "../linalg";
 import { zeros, type Matrix } from "../matrix";
 import { lagMatrices } from "./lag-matrices";
 import type { VarModel } from "./model";
+import { requireStates } from "./work";
 
 /** An eigenvalue of the companion matrix. */
 export interface Root {
@@ -27,11 +28,12 @@ export function companionMatrix(phi: readonly Matrix[]): Matrix {
 
 /**
  * Roots of the autoregressive part, largest modulus first; of a pair the one with positive imaginary part first.
- * @throws Issue "no-lags" at order 0
+ * @throws Issue "no-lags" at order 0 | "too-many-states"
  */
 export function rootsOf(model: VarModel): Root[] {
   const phi = lagMatrices(model);
   if (phi.length === 0) throw new Issue({ code: "no-lags" });
+  requireStates(phi.length * model.series);
   const roots = eigenvalues(companionMatrix(phi)).map(({ real, imaginary }) => {
     const angle = Math.abs(Math.atan2(imaginary, real));
     return {
