@@ -24,7 +24,7 @@ export interface FilterRow {
  * Source: Durbin and Koopman (2012), 4.3 and 6.4 (one cell at a time)
  */
 export function filterGains(space: StateSpace, seen: Uint8Array): FilterRow[] | null {
-  const { size, series } = space;
+  const { series } = space;
   const rows: FilterRow[] = [];
   let before = space.start;
   for (let t = 0; t * series < seen.length; t++) {
@@ -38,10 +38,33 @@ export function filterGains(space: StateSpace, seen: Uint8Array): FilterRow[] | 
     const row = filterRow(space, before, pattern);
     if (row === null) return null;
     rows.push(row);
-    before = congruence(space.transition, row.after, size);
-    for (let i = 0; i < before.length; i++) before[i] += space.noise[i];
+    before = nextVariance(space, row);
   }
   return rows;
+}
+
+/**
+ * The row that the filter settles at when every cell is observed.
+ * @returns null when it has not settled after so many rows, or a cell would be known without error
+ */
+export function settledRow(space: StateSpace, most: number): FilterRow | null {
+  const all = new Uint8Array(space.series).fill(1);
+  let before = space.start;
+  for (let t = 0; t < most; t++) {
+    const row = filterRow(space, before, all);
+    if (row === null) return null;
+    const next = nextVariance(space, row);
+    if (isSame(next, before)) return row;
+    before = next;
+  }
+  return null;
+}
+
+/** T·P·Tᵀ + Ω. */
+function nextVariance(space: StateSpace, { after }: FilterRow): Float64Array {
+  const next = congruence(space.transition, after, space.size);
+  for (let i = 0; i < next.length; i++) next[i] += space.noise[i];
+  return next;
 }
 
 /** Below this share of what the state alone gives, a variance is rounding. */

@@ -1,15 +1,15 @@
 import { inverseSymmetric, multiply, subtract } from "../linalg";
 import type { Matrix } from "../matrix";
-import { filterGains } from "./filter";
+import { settledRow } from "./filter";
 import { varmaSpace, type Varma } from "./varma-space";
 
-/** Rows after which the filter has settled unless a root of the moving average lies on the unit circle. */
-const ROWS = 2000;
+/** Rows after which the filter has settled unless a root of the moving average lies within a hair of the unit circle. */
+const MOST_ROWS = 10_000;
 
 /**
  * The invertible model with the same covariances at every lag: the innovations are those of the settled filter,
  * Σ = ZPZᵀ, and its gain T·P·Zᵀ·Σ⁻¹ holds Φ(j) + Θ(j) in its blocks.
- * @returns null when the autoregression is not stable
+ * @returns null when the autoregression is not stable, or the filter does not settle
  * Source: Anderson and Moore (1979), 9.4
  */
 export function invertible(varma: Varma): Varma | null {
@@ -18,9 +18,9 @@ export function invertible(varma: Varma): Varma | null {
     varma,
     varma.sigma.map(() => []),
   );
-  const gains = space && filterGains(space, new Uint8Array(ROWS * series).fill(1));
-  if (space === null || gains === null) return null;
-  const { before } = gains.at(-1)!;
+  const settled = space && settledRow(space, MOST_ROWS);
+  if (space === null || settled === null) return null;
+  const { before } = settled;
   const p = Array.from({ length: space.size }, (_, i) => [
     ...before.subarray(i * space.size, i * space.size + series),
   ]);

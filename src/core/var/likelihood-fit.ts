@@ -64,9 +64,12 @@ export function likelihoodFit(
   return unmixed(settings, varma, likelihoodAt(data, varma, null)!.mean, mix);
 }
 
-/** Beyond the unit circle a moving average repeats what another says within: the same likelihood, one of the two. */
+/**
+ * Beyond the unit circle a moving average repeats what another says within: the same likelihood, one of the two. One
+ * that is found on the circle, give or take rounding, stays as it is.
+ */
 const withinCircle = (varma: Varma): Varma =>
-  largestOf(turned(varma.theta)) > 1 ? (invertible(varma) ?? varma) : varma;
+  largestOf(turned(varma.theta)) > 1 + 1e-6 ? (invertible(varma) ?? varma) : varma;
 
 /** Minus the log-likelihood with its slope; null where there is none. */
 function fallAt({ data, coordinates }: LikelihoodProblem, point: Float64Array) {

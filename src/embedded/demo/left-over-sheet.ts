@@ -22,7 +22,7 @@ export function leftOverSheet() {
       1,
       0,
       8,
-      3,
+      2,
       "Read the last column. A reading speaks up where p is below 0.05, and chance alone does that in one row of twenty: here the equation for ice, though these data were invented without any change.",
     )
     .put(2, 0, "Five questions to the block on the sheet Model", SECTION)
