@@ -1,5 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { forecastAhead } from "../../src/core/forecast/ahead";
+import { multiply, solveSquare, transpose } from "../../src/core/linalg";
+import { coefficientRoots } from "../../src/core/var/coefficient-covariance";
 import { fitModel } from "../../src/core/var/fit";
 import { bestOrder, compareOrders } from "../../src/core/var/order";
 import { rootsOf } from "../../src/core/var/roots";
@@ -61,5 +63,26 @@ describe("Lütkepohl's investment, income, consumption example", () => {
     const logs = [untilEnd1978[75], ...path].map((row) => row.map(Math.log));
     const changes = logs.slice(1).map((row, t) => row.map((v, k) => v - logs[t][k]));
     close(changes, expected.forecast_1979Q1_to_1980Q1, { rtol: 1e-10, atol: 1e-13 });
+  });
+
+  // printed to three decimals; the sheet function tests one equation at a time, this ties its parts to the joint test
+  it.each([
+    ["income and consumption do not lead investment", [0], [1, 2], expected.granger_inc_cons_to_inv],
+    ["investment leads neither income nor consumption", [1, 2], [0], expected.granger_inv_to_inc_cons],
+  ] as const)("gives the published test that %s", (_, effects, causes, printed) => {
+    const { inverseRoot, root } = coefficientRoots(model, stepSample(sample, steps));
+    const among = multiply(inverseRoot, transpose(inverseRoot));
+    const noise = multiply(root, transpose(root));
+    const tested = effects.flatMap((effect) =>
+      model.regressors.flatMap((regressor, r) =>
+        regressor.kind === "lag" && causes.some((cause) => cause === regressor.series) ? [{ effect, r }] : [],
+      ),
+    );
+    const b = tested.map(({ effect, r }) => [model.coefficients[r][effect]]);
+    const covariance = tested.map((p) => tested.map((q) => among[p.r][q.r] * noise[p.effect][q.effect]));
+    const [[wald]] = multiply(transpose(b), solveSquare(covariance, b));
+    close(wald, printed.wald, { atol: 0.0006, rtol: 0 });
+    close(wald / tested.length, printed.F, { atol: 0.0006, rtol: 0 });
+    expect([tested.length, 3 * (73 - 7)]).toEqual(printed.df);
   });
 });
