@@ -35,11 +35,11 @@ export function readModelBlock(cells: readonly (readonly Cell[])[]): ModelBlock 
   const tag = parseTag(tagCell);
   const block = trim(cells);
   // counted before anything is laid out: a damaged tag may announce millions of rows
-  const count =
-    regressorCount(tag.settings, tag.series, tag.drivers) + tag.series * tag.settings.movingAverage;
+  const regressed = regressorCount(tag.settings, tag.series, tag.drivers);
+  const count = regressed + tag.series * tag.settings.movingAverage;
   requireShape(block, 1 + count + tag.series, 1 + tag.series);
   const regressors = regressorsOf(tag.settings, tag.series, tag.drivers);
-  const names = readNames(block, regressors.length - tag.drivers, tag.drivers);
+  const names = readNames(block, regressed - tag.drivers, tag.drivers);
   refuseMoved(
     block,
     [...regressors.map((r) => regressorLabel(r, names)), ...names.series.map(covarianceLabel)],

@@ -107,6 +107,17 @@ describe.each(Object.entries(BLOCKS))("a block of %s", (name, options) => {
   });
 });
 
+it("a driver stands between lags and innovations, and keeps its name", () => {
+  const drivers = withHeader(["wind"], rows.map((_, t) => [Math.sin(t * t)])); // prettier-ignore
+  const block = ask(model, { series, model: 1, options: "fit=likelihood; ma=1", drivers });
+  expect(block.map(([label]) => label).slice(4, 6)).toEqual(["trips, lag 1", "wind"]);
+  const args = { series, drivers: [...drivers, [0], [0.5]], horizon: 2 };
+  close(
+    numbers(ask(ahead, { ...args, model: block })),
+    numbers(ask(ahead, { ...args, model: 1, options: "fit=likelihood; ma=1" })),
+  );
+});
+
 describe("residual tests count what was estimated", () => {
   const df = (options: string) =>
     Number(ask(residtest, { series, model: 2, options }).find((row) => row[2] === "portmanteau")![5]);

@@ -14,6 +14,8 @@ export interface Minimum extends Slope {
 /** Enough: on a scale of likelihoods the point is known to 1e-7 of its standard error. */
 const SETTLED = 1e-14;
 const MOST_STEPS = 300;
+/** Points looked at before the search is given up: a function that has a lowest point needs little more than its steps. */
+const MOST_POINTS = 600;
 const MOST_HALVINGS = 25;
 /** A step must bring this share of what the slope promises. */
 const SHARE = 1e-4;
@@ -29,11 +31,17 @@ export function minimise(at: (point: Float64Array) => Slope | null, start: Float
   let here = { point: start, ...at(start)! };
   let inverse = unit(size);
   let steps = 0;
+  let points = 0;
+  const counted = (point: Float64Array) => {
+    points++;
+    return at(point);
+  };
   for (let fresh = true; ;) {
     const direction = times(inverse, here.gradient).map((v) => -v);
     const decrement = -dot(direction, here.gradient);
-    if (decrement <= SETTLED || steps >= MOST_STEPS) return { ...here, decrement, steps };
-    const next = search(at, here, direction, decrement);
+    if (decrement <= SETTLED || steps >= MOST_STEPS || points >= MOST_POINTS)
+      return { ...here, decrement, steps };
+    const next = search(counted, here, direction, decrement);
     if (next === null) {
       // the curvature gathered so far may mislead: once more from the bare slope, then this is as far as it goes
       if (fresh) return { ...here, decrement, steps };

@@ -58,7 +58,10 @@ export function likelihoodFit(
 ): { readonly coefficients: Matrix; readonly noiseCovariance: Matrix } {
   const problem = likelihoodProblem(sample, settings);
   const { coordinates, data, mix } = problem;
-  const found = minimise((point) => fallAt(problem, point), new Float64Array(coordinates.size));
+  const start = new Float64Array(coordinates.size);
+  // a start is stable and noisy: what has no likelihood there lacks a level that no cell tells
+  if (fallAt(problem, start) === null) throw new Issue({ code: "gaps-too-many" });
+  const found = minimise((point) => fallAt(problem, point), start);
   const varma = withinCircle(coordinates.varma(found.point));
   refuseUnsettled(found, varma);
   return unmixed(settings, varma, likelihoodAt(data, varma, null)!.mean, mix);

@@ -201,4 +201,5 @@ it("gaps that hide a level for good are refused", () => {
   // one quarter is blank in every year
   const x = inventedSeries(40, 1).map((row, t) => (t % 4 === 2 ? [NaN] : row));
   expect(() => expectedLevels(m, sampleOf(x), free(1, 1))).toThrow("gaps-too-many");
+  expect(() => fitted(x, { steps: m.settings.steps })).toThrow("gaps-too-many");
 });
