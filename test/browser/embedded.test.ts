@@ -169,6 +169,25 @@ describe("the embedded sheet", () => {
     const roots = await sheet.until("Model!G4:K12", (cells) => typeof cells[8][0] === "number");
     expect(roots[0]).toEqual(["modulus", "real", "imaginary", "period (rows)", "reading"]);
     await sheet.until("Model!G16:P22", (cells) => typeof cells[6][1] === "number");
+    const partial = await sheet.until("Model!G25:N37", (cells) => typeof cells[12][5] === "number");
+    expect(partial[0]).toEqual([
+      "lag",
+      "series",
+      "landings",
+      "ice",
+      "electricity",
+      "trips",
+      "statistic",
+      "p-value",
+    ]);
+    // the data were invented with two lags
+    expect([1, 5, 9].map((row) => (partial[row][7] as number) < 0.05)).toEqual([true, true, false]);
+    const implied = await sheet.until("Model!G41:L49", (cells) => typeof cells[8][5] === "number");
+    expect(implied[0]).toEqual(["lag", "series", "landings", "ice", "electricity", "trips"]);
+    expect(implied[1][3]).toBeCloseTo(implied[2][2] as number, 8);
+    const pairs = await sheet.until("Leads!B27:H39", (cells) => typeof cells[12][5] === "number");
+    expect(pairs[0]).toEqual(["leader", "follower", "lag", "correlation", "bound", "p-value", "reading"]);
+    expect(pairs.map((row) => row[6])).toContain("trips follow landings by 2 rows");
     const helps = await sheet.until("Helps!A4:E8", (cells) => typeof cells[4][1] === "number");
     expect(helps[0]).toEqual(["effect", "landings", "ice", "electricity", "trips"]);
     // trips follow landings; landings follow nothing

@@ -6,6 +6,9 @@ import { CENTERED, decimals, HEAD, HEAD_CENTER, HEAD_LEFT, SECTION, TITLE } from
 const LAGS = 4;
 const ROWS = 4 * (LAGS + 1);
 const I = 8;
+/** Every ordered pair of four series. */
+const PAIRS = 12;
+const PAIRS_AT = 4 + ROWS + 3;
 
 /** Where the correlations stand, for the tint. */
 export const LEADS_HEAT: HeatRegion = {
@@ -45,7 +48,17 @@ export function leadsSheet() {
     .dress(4, 2, ROWS, 4, decimals(2))
     .dress(4, 6, ROWS, 1, { ...decimals(2), cl: { rgb: "#6b8087" } })
     .put(3, 0, `=COMOVE.LAGCORR(COMOVE.STEPS(${DATA},"diff 52"),${LAGS})`, HEAD_CENTER);
+  sheet
+    .put(PAIRS_AT - 2, 1, "Every pair in words, each leader's own memory taken out first", SECTION)
+    .put(PAIRS_AT - 1, 1, `=COMOVE.LEADLAG(COMOVE.STEPS(${DATA},"diff 52"),${LAGS})`, HEAD_LEFT)
+    .dress(PAIRS_AT - 1, 2, 1, 1, HEAD_LEFT)
+    .dress(PAIRS_AT - 1, 3, 1, 4, HEAD)
+    .dress(PAIRS_AT - 1, 7, 1, 4, HEAD_LEFT)
+    .height(PAIRS_AT - 1, 28)
+    .dress(PAIRS_AT, 4, PAIRS, 2, decimals(2))
+    .dress(PAIRS_AT, 6, PAIRS, 1, decimals(4))
+    .dress(PAIRS_AT - 1, 7, PAIRS + 1, 1, { pd: { l: 12 } });
   // a sentence takes three rows, so that the table beside it keeps its rhythm
   seen.forEach((text, i) => sheet.block(4 + 3 * i, I, 3, 3, text));
-  return sheet.widths({ 0: 52, 1: 104, 4: 94, 6: 72, 7: 20, [I]: 104 }).build(4);
+  return sheet.widths({ 0: 52, 1: 104, 4: 98, 6: 72, 7: 20, [I]: 104 }).build(4);
 }

@@ -7,6 +7,10 @@ const G = 6;
 const ROOTS = 8;
 const ORDERS = 6;
 const ORDER_AT = 15;
+const PARTIAL_LAGS = 3;
+const PARTIAL_AT = ORDER_AT + ORDERS + 4;
+const IMPLIED_AT = PARTIAL_AT + 4 * PARTIAL_LAGS + 4;
+const SERIES_COUNT = 4;
 
 /** The model as a block of cells, how fast it forgets, and why this order. */
 export function modelSheet() {
@@ -39,6 +43,35 @@ export function modelSheet() {
     .dress(ORDER_AT + 1, G + 6, ORDERS, 1, decimals(0))
     .dress(ORDER_AT + 1, G + 7, ORDERS, 1, decimals(1))
     .dress(ORDER_AT + 1, G + 8, ORDERS, 1, decimals(4))
+    .put(
+      PARTIAL_AT - 2,
+      G,
+      "What each further lag adds, the season taken out: p below 0.05 asks for it",
+      SECTION,
+    )
+    .put(
+      PARTIAL_AT - 1,
+      G,
+      `=COMOVE.PARTIALLAG(COMOVE.RESIDUALS(${DATA},0,"${SEASON}"),${PARTIAL_LAGS})`,
+      HEAD,
+    )
+    .dress(PARTIAL_AT - 1, G + 1, 1, 1, HEAD_LEFT)
+    .dress(PARTIAL_AT - 1, G + 2, 1, 6, HEAD)
+    .height(PARTIAL_AT - 1, 28)
+    .dress(PARTIAL_AT, G + 2, SERIES_COUNT * PARTIAL_LAGS, 4, decimals(3))
+    .dress(PARTIAL_AT, G + 6, SERIES_COUNT * PARTIAL_LAGS, 1, decimals(1))
+    .dress(PARTIAL_AT, G + 7, SERIES_COUNT * PARTIAL_LAGS, 1, decimals(4))
+    .put(
+      IMPLIED_AT - 2,
+      G,
+      "Covariances that the block implies, the season aside: at lag 1 the column leads the row",
+      SECTION,
+    )
+    .put(IMPLIED_AT - 1, G, "=COMOVE.IMPLIEDCOV(A4#,1)", HEAD)
+    .dress(IMPLIED_AT - 1, G + 1, 1, 1, HEAD_LEFT)
+    .dress(IMPLIED_AT - 1, G + 2, 1, 4, HEAD)
+    .height(IMPLIED_AT - 1, 28)
+    .dress(IMPLIED_AT, G + 2, 2 * SERIES_COUNT, 4, decimals(1))
     .widths({
       0: 180,
       1: 76,
@@ -47,7 +80,7 @@ export function modelSheet() {
       4: 76,
       5: 16,
       [G]: 72,
-      [G + 1]: 68,
+      [G + 1]: 84,
       [G + 2]: 82,
       [G + 3]: 102,
       [G + 4]: 80,
