@@ -1,6 +1,8 @@
 import { describe, expect, it } from "vitest";
+import { figure } from "../../src/core/diagnostics/figure";
 import { MODEL } from "../../src/functions/fit";
 import { residtest } from "../../src/sheet/calls/residtest";
+import { residualReading } from "../../src/texts/en";
 import { inventedSeries, normals } from "../support/invented";
 import { ask, errorOf, withHeader } from "../support/sheet";
 
@@ -95,6 +97,28 @@ describe("RESIDTEST", () => {
     const row = wide.find(([, about, method]) => about === "y2" && method === "largest Chow Wald")!;
     expect(row[4]).toBeGreaterThan(0);
     expect(row.slice(6)).toEqual(["", "", "more than 30 coefficients: no p-value known"]);
+  });
+
+  it("the largest root says that shocks fade, or what is wrong where they do not", () => {
+    expect(reading(found, "largest root")).toMatch(/^shocks fade: .*half left after [0-9.]+ rows$/);
+    const root = (modulus: number) =>
+      residualReading({
+        question: "use",
+        method: "root",
+        about: null,
+        figure: figure({ statistic: modulus }),
+        root: { modulus, real: modulus, imaginary: 0, period: null },
+        heavyTails: false,
+      });
+    expect(root(0.5)).toBe("shocks fade: half left after 1 row");
+    expect(root(0)).toBe("shocks fade: gone at once");
+    expect(root(0.99)).toMatch(/^hardly fades/);
+    expect(root(1.1)).toBe("grows: the forecast explodes");
+  });
+
+  it("where nothing is found it says so, and claims no more", () => {
+    expect(reading(found, "ARCH LM")).toBe("no sign that the spread changes");
+    expect(reading(found, "largest Chow Wald", "ice")).toBe("no sign that the equation changed");
   });
 
   it("every reading is short and plain", () => {

@@ -3,21 +3,25 @@ import type { ResidualTest } from "../../core/diagnostics/residual-tests";
 import type { Lead } from "../../core/moments/lead-lag";
 import type { Root } from "../../core/var/roots";
 
+/** Above this modulus half of a shock is left after more than 34 rows: hardly told from one that stays. */
+const LASTING = 0.98;
+
 /** What one root says about a model. */
 export function rootReading({ modulus, period }: Root): string {
   const swing = period === null ? "" : period <= 2.0000001 ? "zigzag" : `swing of ${round(period)} rows`;
   if (modulus < 1e-8) return "gone at once";
   if (modulus > 1 + 1e-9)
     return swing === "" ? "grows: the forecast explodes" : `${swing} that grows: the forecast explodes`;
-  if (modulus > 0.98) {
-    const memory =
-      modulus > 1 - 1e-9
-        ? "never fades"
-        : `hardly fades: half left after ${round(Math.log(0.5) / Math.log(modulus))} rows`;
+  if (modulus > LASTING) {
+    const memory = modulus > 1 - 1e-9 ? "never fades" : `hardly fades: ${halfLeft(modulus)}`;
     return `${swing === "" ? "" : `${swing}, `}${memory}; differences may be needed`;
   }
-  const half = `half left after ${round(Math.log(0.5) / Math.log(modulus))} rows`;
-  return swing === "" ? half : `${swing}, ${half}`;
+  return swing === "" ? halfLeft(modulus) : `${swing}, ${halfLeft(modulus)}`;
+}
+
+function halfLeft(modulus: number): string {
+  const rows = round(Math.log(0.5) / Math.log(modulus));
+  return `half left after ${rows} ${rows === "1" ? "row" : "rows"}`;
 }
 
 /** What the closest lag of a pair says, the later series first, so that the direction cannot be mistaken. */
@@ -78,9 +82,9 @@ export function residualReading(test: ResidualTest): string {
 
 const quietReadings = {
   predict: "nothing left that the lags could predict",
-  spread: "spread is steady",
+  spread: "no sign that the spread changes",
   shape: "nothing against a normal shape",
-  change: "no change in the equation",
+  change: "no sign that the equation changed",
 } as const;
 
 function foundReading({ method, heavyTails }: ResidualTest): string {
@@ -103,7 +107,7 @@ function foundReading({ method, heavyTails }: ResidualTest): string {
 }
 
 function useReading({ method, figure, root }: ResidualTest): string {
-  if (root !== null) return rootReading(root);
+  if (root !== null) return root.modulus > LASTING ? rootReading(root) : `shocks fade: ${rootReading(root)}`;
   const value = figure.statistic!;
   if (method === "rows") {
     if (value < 3) return "fewer than 3 rows per coefficient: too many lags";
