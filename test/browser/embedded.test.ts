@@ -7,6 +7,8 @@ beforeAll(async () => {
 });
 afterAll(() => sheet.close());
 
+const NAMES = ["landings", "ice", "electricity", "trips"];
+const LEFT = (cells: string) => `'Left over'!${cells}`;
 const FORECAST = '=COMOVE.AHEAD(B4:E160,12,,"cycle=52; waves=1")';
 
 describe("the embedded sheet", () => {
@@ -180,11 +182,72 @@ describe("the embedded sheet", () => {
       for (let k = 0; k < 12; k += 3) expect(row[k] < row[k + 1] && row[k + 1] < row[k + 2]).toBe(true);
     }
     expect(isError((await sheet.read("Blemishes!G4"))[0][0], "#VALUE!")).toBe(true);
-    for (const name of ["Leads", "Model", "Helps", "Forecast", "Blemishes"]) {
+    for (const name of ["Leads", "Model", "Helps", "Left over", "Forecast", "Blemishes"]) {
       await sheet.select(name, "A1");
       await sheet.page.waitForTimeout(300);
-      await sheet.shot(name.toLowerCase());
+      await sheet.shot(name.toLowerCase().replace(" ", "-"));
     }
+  });
+
+  it("estimates 11 coefficients of each of the 4 series: a constant, two halves of a wave, two lags of each", async () => {
+    const [head, ...rows] = (await sheet.read("Helps!A12:H57")).filter(([equation]) => equation !== null);
+    expect(head).toEqual([
+      "equation",
+      "regressor",
+      "coefficient",
+      "low",
+      "high",
+      "std error",
+      "t",
+      "p-value",
+    ]);
+    expect(rows.map(([equation]) => equation)).toEqual(NAMES.flatMap((name) => Array(11).fill(name)));
+    for (const [, , coefficient, low, high] of rows as number[][])
+      expect(low < coefficient && coefficient < high).toBe(true);
+  });
+
+  it("asks five questions of what the model leaves over, and answers each in words", async () => {
+    const block = await sheet.until(LEFT("A4:I23"), (cells) => typeof cells[19][8] === "string");
+    const [head, ...tests] = block;
+    expect(head).toEqual([
+      "question", "about", "method", "lags", "statistic", "df", "df 2", "p-value", "reading",
+    ]); // prettier-ignore
+    // 19 rows and no more: each question in turn, some of all series together, some of each
+    const asked = (about: string) => tests.filter((row) => row[1] === about).map(([question]) => question);
+    expect(asked("all series")).toEqual([
+      ...Array(4).fill("anything left to predict?"),
+      "does the spread change?",
+      ...Array(3).fill("is the shape normal?"),
+      ...Array(3).fill("fit to use?"),
+    ]);
+    for (const name of NAMES)
+      expect(asked(name)).toEqual(["anything left to predict?", "did the equation change?"]);
+    expect((await sheet.read(LEFT("A24:I24")))[0]).toEqual(Array(9).fill(null));
+    for (const row of tests) {
+      expect(typeof row[4]).toBe("number");
+      expect(row[8]).toMatch(/^[a-z][a-z0-9 ,.:]{10,90}$/);
+    }
+    const p = tests.map((row) => row[7]).filter((value) => value !== null) as number[];
+    expect(p).toHaveLength(16);
+    expect(p.every((value) => value > 0 && value < 1)).toBe(true);
+  });
+
+  it("splits every week into what the model expected and what is left over", async () => {
+    const weeks = await sheet.read(LEFT("K4:Y160"));
+    expect(weeks[0]).toEqual(["week", ...NAMES, null, ...NAMES, null, ...NAMES]);
+    expect(weeks.map((row) => row.slice(0, 5))).toEqual(await sheet.read("Data!A4:E160"));
+    // the model looks back two weeks
+    for (const row of weeks.slice(1, 3)) expect(row.slice(5)).toEqual(Array(10).fill(null));
+    for (const row of weeks.slice(3) as number[][]) {
+      for (let k = 0; k < NAMES.length; k++) expect(row[6 + k] + row[11 + k]).toBeCloseTo(row[1 + k], 9);
+    }
+    // with a constant in every equation what is left over sums to zero
+    const left = weeks.slice(3).map((row) => row[11] as number);
+    expect(left.reduce((sum, value) => sum + value)).toBeCloseTo(0, 6);
+    expect(Math.max(...left.map(Math.abs))).toBeGreaterThan(1);
+    expect((await sheet.read(LEFT("K161:Y161")))[0]).toEqual(Array(15).fill(null));
+    const everything = (await sheet.read(LEFT("A1:Z170"))).flat();
+    expect(everything.filter((cell) => typeof cell === "object" && cell !== null)).toEqual([]);
   });
 
   it("was quiet: no console errors, no refused content, no request to another host", () => {
