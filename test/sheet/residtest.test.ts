@@ -1,6 +1,8 @@
 import { describe, expect, it } from "vitest";
+import { figure } from "../../src/core/diagnostics/figure";
 import { MODEL } from "../../src/functions/fit";
 import { residtest } from "../../src/sheet/calls/residtest";
+import { residualReading } from "../../src/texts/en";
 import { inventedSeries, normals } from "../support/invented";
 import { ask, errorOf, withHeader } from "../support/sheet";
 
@@ -81,7 +83,7 @@ describe("RESIDTEST", () => {
     expect(reading(told, "kurtosis")).toBe("tails heavier than normal: bands may be too narrow");
     const turned = Array.from({ length: 120 }, (_, t) => [(t < 60 ? 0 : 4) + draw()]);
     expect(reading(ask(residtest, { series: turned, model: 0 }), "largest Chow Wald", "y1")).toBe(
-      "the equation changed: a shorter range, or a driver, may help (p below 0.001)",
+      "signs of a change: a shorter range, or a driver, may help (p below 0.001)",
     );
     const short = ask(residtest, { series: rows.slice(0, 13), model: 2 });
     expect(reading(short, "rows per coefficient")).toBe("fewer than 3 rows per coefficient: too many lags");
@@ -95,6 +97,28 @@ describe("RESIDTEST", () => {
     const row = wide.find(([, about, method]) => about === "y2" && method === "largest Chow Wald")!;
     expect(row[4]).toBeGreaterThan(0);
     expect(row.slice(6)).toEqual(["", "", "more than 30 coefficients: no p-value known"]);
+  });
+
+  it("the largest root says that shocks fade, or what is wrong where they do not", () => {
+    expect(reading(found, "largest root")).toMatch(/^shocks fade: .*half left after [0-9.]+ rows$/);
+    const root = (modulus: number) =>
+      residualReading({
+        question: "use",
+        method: "root",
+        about: null,
+        figure: figure({ statistic: modulus }),
+        root: { modulus, real: modulus, imaginary: 0, period: null },
+        heavyTails: false,
+      });
+    expect(root(0.5)).toBe("shocks fade: half left after 1 row");
+    expect(root(0)).toBe("shocks fade: gone at once");
+    expect(root(0.99)).toMatch(/^hardly fades/);
+    expect(root(1.1)).toBe("grows: the forecast explodes");
+  });
+
+  it("where nothing is found it says so, and claims no more", () => {
+    expect(reading(found, "ARCH LM")).toBe("no sign that the spread changes");
+    expect(reading(found, "largest Chow Wald", "ice")).toBe("no sign that the equation changed");
   });
 
   it("every reading is short and plain", () => {

@@ -1,4 +1,10 @@
-import { HorizontalAlign, VerticalAlign, WrapStrategy, type IStyleData } from "@univerjs/core";
+import {
+  BorderStyleTypes,
+  HorizontalAlign,
+  VerticalAlign,
+  WrapStrategy,
+  type IStyleData,
+} from "@univerjs/core";
 
 const INK = { rgb: "#12343b" };
 const MIDDLE = VerticalAlign.MIDDLE;
@@ -22,6 +28,13 @@ export const FORECAST_MIDDLE: IStyleData = { ...FORECAST, bl: 1 };
 export const FORECAST_COUNT: IStyleData = { ...FORECAST, n: { pattern: "0" } };
 
 export const DATE: IStyleData = { n: { pattern: "yyyy-mm-dd" }, ht: LEFT, cl: { rgb: "#46606a" } };
+/** For a table with many columns, and for those of its columns that only a checker reads. */
+export const SMALL: IStyleData = { fs: 10 };
+export const ASIDE: IStyleData = { ...SMALL, cl: { rgb: "#6b8087" } };
+/** Keeps words clear of the figures on their left. */
+export const INDENTED: IStyleData = { pd: { l: 10 } };
+/** A line above, where another group of rows begins. */
+export const RULED: IStyleData = { bd: { t: { s: BorderStyleTypes.THIN, cl: { rgb: "#a9bfc3" } } } };
 export const CENTERED: IStyleData = { ht: CENTER };
 export const decimals = (count: number): IStyleData => ({
   n: { pattern: count === 0 ? "0" : `0.${"0".repeat(count)}` },

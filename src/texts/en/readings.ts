@@ -3,21 +3,25 @@ import type { ResidualTest } from "../../core/diagnostics/residual-tests";
 import type { Lead } from "../../core/moments/lead-lag";
 import type { Root } from "../../core/var/roots";
 
+/** Above this modulus half of a shock is left after more than 34 rows: hardly told from one that stays. */
+const LASTING = 0.98;
+
 /** What one root says about a model. */
 export function rootReading({ modulus, period }: Root): string {
   const swing = period === null ? "" : period <= 2.0000001 ? "zigzag" : `swing of ${round(period)} rows`;
   if (modulus < 1e-8) return "gone at once";
   if (modulus > 1 + 1e-9)
     return swing === "" ? "grows: the forecast explodes" : `${swing} that grows: the forecast explodes`;
-  if (modulus > 0.98) {
-    const memory =
-      modulus > 1 - 1e-9
-        ? "never fades"
-        : `hardly fades: half left after ${round(Math.log(0.5) / Math.log(modulus))} rows`;
+  if (modulus > LASTING) {
+    const memory = modulus > 1 - 1e-9 ? "never fades" : `hardly fades: ${halfLeft(modulus)}`;
     return `${swing === "" ? "" : `${swing}, `}${memory}; differences may be needed`;
   }
-  const half = `half left after ${round(Math.log(0.5) / Math.log(modulus))} rows`;
-  return swing === "" ? half : `${swing}, ${half}`;
+  return swing === "" ? halfLeft(modulus) : `${swing}, ${halfLeft(modulus)}`;
+}
+
+function halfLeft(modulus: number): string {
+  const rows = round(Math.log(0.5) / Math.log(modulus));
+  return `half left after ${rows} ${rows === "1" ? "row" : "rows"}`;
 }
 
 /** What the closest lag of a pair says, the later series first, so that the direction cannot be mistaken. */
@@ -79,9 +83,9 @@ export function residualReading(test: ResidualTest): string {
 
 const quietReadings = {
   predict: "nothing left that the lags could predict",
-  spread: "spread is steady",
+  spread: "no sign that the spread changes",
   shape: "nothing against a normal shape",
-  change: "no change in the equation",
+  change: "no sign that the equation changed",
 } as const;
 
 function foundReading({ method, heavyTails }: ResidualTest): string {
@@ -97,23 +101,23 @@ function foundReading({ method, heavyTails }: ResidualTest): string {
     case "both":
       return "not normal: bands may be off";
     case "chow":
-      return "the equation changed: a shorter range, or a driver, may help";
+      return "signs of a change: a shorter range, or a driver, may help";
     default:
       return "something is left: more lags, or steps, may help";
   }
 }
 
 function useReading({ method, figure, root }: ResidualTest): string {
-  if (root !== null) return rootReading(root);
+  if (root !== null) return root.modulus > LASTING ? rootReading(root) : `shocks fade: ${rootReading(root)}`;
   const value = figure.statistic!;
   if (method === "rows") {
     if (value < 3) return "fewer than 3 rows per coefficient: too many lags";
     return value < 10 ? "rather few rows per coefficient" : "enough rows per coefficient";
   }
-  if (value < 30) return "regressors well apart";
+  if (value < 30) return "lags and terms are well apart";
   return value < 1000
-    ? "regressors overlap: single coefficients are uncertain"
-    : "regressors hardly apart: steps, or fewer terms, may help";
+    ? "lags and terms overlap: single coefficients are uncertain, forecasts less so"
+    : "lags and terms hardly apart: steps, or fewer terms, may help";
 }
 
 /** "trips follow", "price follows": names that end like a plural take the plural. */
