@@ -1,11 +1,12 @@
 import type { HeatRegion } from "../heat";
 import { DATA } from "./data-sheet";
 import { SheetBuilder } from "./sheet-builder";
-import { CENTERED, decimals, HEAD, HEAD_CENTER, HEAD_LEFT, SECTION, TITLE } from "./styles";
+import { CENTERED, decimals, HEAD, HEAD_CENTER, HEAD_LEFT, INDENTED, NOTE, SECTION, TITLE } from "./styles";
 
 const LAGS = 4;
 const ROWS = 4 * (LAGS + 1);
-const I = 8;
+/** Sentences beside the correlations, and the readings below them. */
+const WORDS = 7;
 /** Every ordered pair of four series. */
 const PAIRS = 12;
 const PAIRS_AT = 4 + ROWS + 3;
@@ -35,11 +36,11 @@ export function leadsSheet() {
     .note(
       1,
       0,
-      11,
+      8,
       2,
       "A large entry at lag 2 says: the column series leads the row series by 2 weeks. The yearly swing is taken out first, by the difference to the same week a year before.",
     )
-    .put(3, I, "What to see", SECTION)
+    .put(3, WORDS, "What to see", { ...SECTION, ...INDENTED })
     .dress(3, 0, 1, 1, HEAD_CENTER)
     .dress(3, 1, 1, 1, HEAD_LEFT)
     .dress(3, 2, 1, 5, HEAD)
@@ -53,12 +54,12 @@ export function leadsSheet() {
     .put(PAIRS_AT - 1, 1, `=COMOVE.LEADLAG(COMOVE.STEPS(${DATA},"diff 52"),${LAGS})`, HEAD_LEFT)
     .dress(PAIRS_AT - 1, 2, 1, 1, HEAD_LEFT)
     .dress(PAIRS_AT - 1, 3, 1, 4, HEAD)
-    .dress(PAIRS_AT - 1, 7, 1, 4, HEAD_LEFT)
+    .dress(PAIRS_AT - 1, WORDS, 1, 1, HEAD_LEFT)
     .height(PAIRS_AT - 1, 28)
     .dress(PAIRS_AT, 4, PAIRS, 2, decimals(2))
     .dress(PAIRS_AT, 6, PAIRS, 1, decimals(4))
-    .dress(PAIRS_AT - 1, 7, PAIRS + 1, 1, { pd: { l: 12 } });
+    .dress(PAIRS_AT - 1, WORDS, PAIRS + 1, 1, INDENTED);
   // a sentence takes three rows, so that the table beside it keeps its rhythm
-  seen.forEach((text, i) => sheet.block(4 + 3 * i, I, 3, 3, text));
-  return sheet.widths({ 0: 52, 1: 104, 4: 98, 6: 72, 7: 20, [I]: 104 }).build(4);
+  seen.forEach((text, i) => sheet.block(4 + 3 * i, WORDS, 3, 1, text, { ...NOTE, ...INDENTED }));
+  return sheet.widths({ 0: 52, 1: 104, 4: 98, 6: 72, [WORDS]: 340 }).build(4);
 }

@@ -83,7 +83,7 @@ export function modelSheet() {
       [G + 1]: 84,
       [G + 2]: 82,
       [G + 3]: 102,
-      [G + 4]: 80,
+      [G + 4]: 94,
       [G + 9]: 150,
     })
     .build(4);

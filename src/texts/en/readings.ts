@@ -116,7 +116,7 @@ function useReading({ method, figure, root }: ResidualTest): string {
   }
   if (value < 30) return "lags and terms are well apart";
   return value < 1000
-    ? "lags and terms overlap: single coefficients are uncertain, forecasts less so"
+    ? "lags and terms overlap: single coefficients are uncertain"
     : "lags and terms hardly apart: steps, or fewer terms, may help";
 }
 
