@@ -79,8 +79,10 @@ export class EmbeddedHost implements SheetHost {
 
   nameRange(name: string, address: string): Promise<void> {
     const book = this.#book;
-    if (book.getDefinedName(name)) book.deleteDefinedName(name);
-    book.insertDefinedName(name, address);
+    const named = book.getDefinedName(name);
+    // a name taken away and put back would leave #REF! in the formulas that use it
+    if (named) named.setRef(address);
+    else book.insertDefinedName(name, address);
     return Promise.resolve();
   }
 

@@ -76,3 +76,14 @@ it("everything written inside one undo step is taken back by one undo", async ()
   await sheet.page.waitForTimeout(300);
   expect(await read()).toEqual([[null], [null], [null]]);
 });
+
+it("formulas that use a name follow it when it is moved", async () => {
+  const host = remoteHost(sheet);
+  await host.writeFormulas("Work!D20", [["=30+12"]]);
+  await host.writeFormulas("Work!D21", [["=40+17"]]);
+  await host.nameRange("moving_total", "Work!D20");
+  await host.writeFormulas("Work!E20", [["=moving_total"]]);
+  await sheet.until("Work!E20", ([[v]]) => v === 42);
+  await host.nameRange("moving_total", "Work!D21");
+  await sheet.until("Work!E20", ([[v]]) => v === 57);
+});
