@@ -115,6 +115,7 @@ export type IssueFacts =
       readonly largest: number | null;
     }
   | { readonly code: "too-heavy"; readonly rows: number; readonly coefficients: number }
+  | { readonly code: "filter-heavy"; readonly rows: number; readonly states: number }
   | { readonly code: "too-many-states"; readonly states: number; readonly limit: number }
   | { readonly code: "lags-beyond-rows"; readonly lag: number; readonly rows: number }
   | {

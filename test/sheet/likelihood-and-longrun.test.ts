@@ -154,6 +154,14 @@ describe("gaps", () => {
     expect(errorOf(ahead, { series: gappy, horizon: 4, model: block })).toMatch(/is blank/);
   });
 
+  it("are not looked past over so many rows that memory would run out, which the horizon decides", () => {
+    const far = { series: gappy, model: 1, options: `${options}; steps=diff 12` };
+    expect(errorOf(ahead, { ...far, horizon: 10_000 })).toMatch(
+      /^#VALUE! To look past gaps, 39 numbers would be carried through 10,068 rows: too much here\. Ask for fewer rows ahead/,
+    );
+    expect(numbers(ask(ahead, { ...far, horizon: 24 }))).toHaveLength(24);
+  });
+
   it("leave blank residuals and full fitted values", () => {
     const block = ask(model, { series: gappy, model: 1, options });
     const args = { series: gappy, model: block, options: "gaps=allow" };

@@ -39,6 +39,7 @@ const examples: readonly IssueFacts[] = [
   { code: "likelihood-stuck", reason: "ar-root" },
   { code: "likelihood-stuck", reason: "flat" },
   { code: "gaps-too-many" },
+  { code: "filter-heavy", rows: 10_156, states: 56 },
   { code: "blank-series", name: "price" },
   { code: "header-number", range: "series", column: 2, text: "2024" },
   { code: "header-twice", range: "series", name: "price" },

@@ -2,6 +2,8 @@ import { Issue } from "../issue";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
 import { coefficientRoots } from "../var/coefficient-covariance";
 import { hasGaps } from "../var/observed";
+import { levelStates } from "../var/filtered";
+import { requireFilterWork } from "../var/work";
 import { likelihoodDirections } from "../var/likelihood-covariance";
 import type { VarModel } from "../var/model";
 import type { Sample } from "../var/sample";
@@ -17,11 +19,14 @@ const STEP = 1e-3;
  * Variance that the coefficients' sampling error adds to the forecast before log or square root are undone: exact
  * derivatives for regressions, differences of the forecast itself for a likelihood, whose filter depends on them too.
  * @returns h×K
- * @throws Issue "gaps-not-here" with gaps and numbers that do not come from a likelihood
+ * @throws Issue "filter-heavy" | "gaps-not-here" with gaps and numbers that do not come from a likelihood
  */
 export function coefficientSpread(model: VarModel, sample: Sample, horizon: number): Matrix {
   if (model.settings.fit === "likelihood") {
-    return likelihoodDirections(model, sample).reduce<MutableMatrix>(
+    const directions = likelihoodDirections(model, sample);
+    if (hasGaps(sample))
+      requireFilterWork(sample.series.length + horizon, levelStates(model), 2 * directions.length);
+    return directions.reduce<MutableMatrix>(
       (sum, direction) => {
         const up = moved(model, sample, horizon, direction, STEP);
         const down = moved(model, sample, horizon, direction, -STEP);

@@ -1,12 +1,6 @@
 import type { FilterRow, Track } from "./filter";
-import {
-  dotDense,
-  pullBy,
-  seeCell,
-  transposeCongruence,
-  transposeTimesDense,
-  type StateSpace,
-} from "./state-space";
+import { dotDense, transposeCongruence, transposeTimesDense, type StateSpace } from "./state-space";
+import { pullBy, seeCell } from "./seen-cell";
 
 /**
  * How −½ Σ (log F + v²/F) changes with what the filter was built from. With several tracks the squares v²/F of all

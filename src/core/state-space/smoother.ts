@@ -1,13 +1,6 @@
 import { runFilter, type FilterRow } from "./filter";
-import {
-  dot,
-  dotDense,
-  pullBy,
-  seeCell,
-  transposeCongruence,
-  transposeTimesDense,
-  type StateSpace,
-} from "./state-space";
+import { dot, dotDense, transposeCongruence, transposeTimesDense, type StateSpace } from "./state-space";
+import { pullBy, seeCell } from "./seen-cell";
 
 /**
  * What every cell is expected to be given all cells seen, before and after it; a seen cell is itself.

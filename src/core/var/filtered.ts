@@ -1,6 +1,7 @@
 import { Issue } from "../issue";
 import { factorColumns, inverseRoot, solveColumns, transpose } from "../linalg";
 import { zeros, type Matrix, type MutableMatrix } from "../matrix";
+import { rowsLost } from "../prepare/steps";
 import { filterGains, observeAll, runFilter, whitening, type FilterRow } from "../state-space/filter";
 import { smoothedCells, smoothedVariances } from "../state-space/smoother";
 import { timesDense } from "../state-space/state-space";
@@ -9,11 +10,12 @@ import { innovationRoot } from "./innovation-root";
 import { lagMatrices, movingAverageMatrices } from "./lag-matrices";
 import { driverPath } from "./mean-tracks";
 import type { VarModel } from "./model";
-import { lift, observedSample, type Observed } from "./observed";
+import { combination, lift, observedSample, type Observed } from "./observed";
 import { largestRoot } from "./roots";
 import type { Sample } from "./sample";
 import { stationaryMean } from "./stationary-mean";
 import { termCount, termRow } from "./terms";
+import { requireFilterWork, statesOf } from "./work";
 
 /** A model's numbers laid over the observed cells of a sample: everything that is known, taken out of them. */
 interface Laid {
@@ -29,10 +31,12 @@ interface Laid {
 
 /**
  * @param ahead how many of the rows lie ahead of the data
- * @throws Issue "gaps-too-many" | "predicted-exactly" | "covariance-not-positive" | "too-large"
+ * @throws Issue "filter-heavy" | "gaps-too-many" | "covariance-not-positive" | "covariance-asymmetric" | "too-large"
  */
 function layOver(model: VarModel, sample: Sample, ahead: number): Laid {
   const observed = observedSample(sample, model.settings.steps, { levels: true });
+  requireFilterWork(observed.rows, levelStates(model));
+  // checked only: the filter needs the covariance itself
   innovationRoot(model);
   const varma = {
     phi: lagMatrices(model),
@@ -64,15 +68,13 @@ function layOver(model: VarModel, sample: Sample, ahead: number): Laid {
   };
 }
 
-const combination = (
-  tracks: readonly Float64Array[],
-  weights: readonly number[],
-  length: number,
-): Float64Array => {
-  const out = new Float64Array(length);
-  tracks.forEach((track, c) => track.forEach((v, i) => (out[i] += weights[c] * v)));
-  return out;
-};
+/** Numbers that a state carries when every differenced series is followed as its level. */
+export const levelStates = ({ settings, series }: VarModel): number =>
+  statesOf(
+    settings,
+    series,
+    settings.steps.reduce((sum, steps) => sum + rowsLost(steps), 0),
+  );
 
 /** Where terms and drivers lead: around this the series move with mean zero. */
 function meanPath(

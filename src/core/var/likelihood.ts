@@ -3,6 +3,7 @@ import { Issue } from "../issue";
 import type { Matrix, MutableMatrix } from "../matrix";
 import { filterGradient } from "../state-space/adjoint";
 import { cellVariances, filterGains, runFilter, whitening, type FilterRow } from "../state-space/filter";
+import { dotDense } from "../state-space/state-space";
 import {
   varmaGradient,
   varmaSpace,
@@ -11,7 +12,7 @@ import {
   type VarmaSpace,
 } from "../state-space/varma-space";
 import { meanTracks, throughDrivers } from "./mean-tracks";
-import type { Observed } from "./observed";
+import { combination, type Observed } from "./observed";
 
 /** What a likelihood is computed of: observed cells, terms and drivers, row beside row. */
 export interface LikelihoodData {
@@ -76,9 +77,10 @@ export function likelihoodAt(data: LikelihoodData, varma: Varma, mean: MeanPart 
       const run = (v: Float64Array) => runFilter(space, gains, v);
       const spread = unknownRoot.map((_, c) =>
         run(
-          combined(
-            data.observed,
+          combination(
+            data.observed.unknown,
             unknownRoot.map((row) => row[c]),
+            data.observed.values.length,
           ),
         ),
       );
@@ -90,7 +92,7 @@ export function likelihoodAt(data: LikelihoodData, varma: Varma, mean: MeanPart 
         phi: direct.phi.map((matrix, j) => add(matrix, phi[j])),
         mean: meanPart(
           data,
-          tracks.map((track) => -product(by.values, track)),
+          tracks.map((track) => -dotDense(by.values, track)),
         ),
       };
     },
@@ -178,25 +180,8 @@ function less(
   tracks: readonly Float64Array[],
   weights: readonly number[],
 ): Float64Array {
-  const out = values.slice();
-  tracks.forEach((track, c) => {
-    for (let i = 0; i < out.length; i++) out[i] -= weights[c] * track[i];
-  });
-  return out;
-}
-
-/** Σ weight·track over the unknown levels. */
-const combined = ({ unknown, values }: Observed, weights: readonly number[]): Float64Array =>
-  less(
-    new Float64Array(values.length),
-    unknown,
-    weights.map((w) => -w),
-  );
-
-function product(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
-  return sum;
+  const taken = combination(tracks, weights, values.length);
+  return values.map((v, i) => v - taken[i]);
 }
 
 /** A flat list, terms first and equations within, as the two parts of the mean. */

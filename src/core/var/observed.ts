@@ -124,3 +124,16 @@ export function unlift(
   });
   return out;
 }
+
+/** Σ weight·track, of so many values. */
+export function combination(
+  tracks: readonly Float64Array[],
+  weights: readonly number[],
+  length: number,
+): Float64Array {
+  const out = new Float64Array(length);
+  tracks.forEach((track, c) => {
+    for (let i = 0; i < length; i++) out[i] += weights[c] * track[i];
+  });
+  return out;
+}

@@ -20,6 +20,29 @@ export function requireStates(states: number): void {
   if (states > limit) throw new Issue({ code: "too-many-states", states, limit });
 }
 
+/** Numbers that a state space carries from row to row. @param levels past levels among them */
+export const statesOf = (
+  { lags, movingAverage }: Pick<ModelSettings, "lags" | "movingAverage">,
+  series: number,
+  levels: number,
+): number => series * Math.max(lags.at(-1) ?? 0, movingAverage + 1) + levels;
+
+/** Entries of state variances, row after row, that one pass of the filter may keep: some 160 MB, and under two seconds. */
+const FILTER_LIMIT = 1e7;
+
+/** Entries that many passes may go through beside the page: about a minute. */
+const PASSES_LIMIT = 7e8;
+
+/**
+ * Refuses to look past gaps over so many rows, or so often, that memory or patience would run out.
+ * @throws Issue "filter-heavy"
+ */
+export function requireFilterWork(rows: number, states: number, passes = 1): void {
+  const entries = rows * states * states;
+  if (entries > FILTER_LIMIT || passes * entries > PASSES_LIMIT)
+    throw new Issue({ code: "filter-heavy", rows, states });
+}
+
 /** Multiplications that a fit by likelihood may take beside the page: about a minute. */
 const LIKELIHOOD_LIMIT = 2e10;
 
@@ -37,11 +60,14 @@ export function requireLikelihoodWork(
     series,
     undone,
   }: { readonly rows: number; readonly series: number; readonly undone: readonly (readonly number[])[] },
-  { lags, movingAverage, ...settings }: ModelSettings,
+  settings: ModelSettings,
 ): void {
-  const states =
-    series * Math.max(lags.at(-1) ?? 0, movingAverage + 1) +
-    undone.reduce((sum, { length }) => sum + length, 0);
+  const { lags, movingAverage } = settings;
+  const states = statesOf(
+    settings,
+    series,
+    undone.reduce((sum, { length }) => sum + length, 0),
+  );
   const each = rows * 6 * states * states * (series + 1) + 60 * states ** 3;
   const coefficients = termCount(settings) + series * (lags.length + movingAverage);
   if (LIKELIHOOD_TRIES * each > LIKELIHOOD_LIMIT) throw new Issue({ code: "too-heavy", rows, coefficients });

@@ -174,6 +174,8 @@ export const issueWords: { readonly [C in IssueCode]: Words<C> } = {
       : `The largest order it can carry is ${grouped(largest)}. Use fewer lags or more rows.`),
   "too-heavy": ({ rows, coefficients }) =>
     `This fit would hold up the sheet: ${plural(rows, "row")} with ${plural(coefficients, "coefficient")} per equation. Use waves for a long season, fewer lags, or fewer rows.`,
+  "filter-heavy": ({ rows, states }) =>
+    `To look past gaps, ${grouped(states)} numbers would be carried through ${plural(rows, "row")}: too much here. Ask for fewer rows ahead, use shorter differences or fewer lags, or fill the gaps.`,
   "too-many-states": ({ states, limit }) =>
     `This model remembers ${grouped(states)} numbers, its series times its lags; at most ${grouped(limit)} can be worked out here. Use a shorter order or fewer series.`,
   "lags-beyond-rows": ({ lag, rows }) =>
